@@ -1,0 +1,132 @@
+using RespDerive.Physiology.Inputs;
+
+namespace RespDerive.Physiology;
+
+/// <summary>What became of one computation: a number with its uncertainty, or a reason for withholding it.</summary>
+public sealed record Computation
+{
+    /// <summary>Unrounded, canonical unit; NaN when withheld.</summary>
+    public double Value { get; init; } = double.NaN;
+
+    /// <summary>The number as published.</summary>
+    public decimal Published { get; init; }
+
+    /// <summary>Standard uncertainty, k = 1, same unit.</summary>
+    public double Uncertainty { get; init; }
+
+    /// <summary>Variance shares.</summary>
+    public IReadOnlyList<Share> Shares { get; init; } = [];
+
+    /// <summary>Flags, ordered.</summary>
+    public IReadOnlyList<string> Flags { get; init; } = [];
+
+    /// <summary>Method variant; null for the plain method.</summary>
+    public string? Variant { get; init; }
+
+    /// <summary>Reason for withholding; null when there is a value.</summary>
+    public string? Withheld { get; init; }
+
+    /// <summary>What is missing, in words, when <see cref="Withheld"/> says so.</summary>
+    public IReadOnlyList<string> Missing { get; init; } = [];
+
+    /// <summary>Evaluates a definition on its roots. Never throws for any combination of roots.</summary>
+    public static Computation Of(Definition definition, Roots roots)
+    {
+        var reasons = new List<string>();
+        var missing = new List<string>();
+        var formula = definition.Result.Formula!;
+        var byIdentity = definition.ByIdentity.Count > 0 && definition.ByIdentity.All(roots.Has);
+        if (!byIdentity)
+        {
+            FindMissing(definition.Result.Needs, roots, reasons, missing);
+        }
+
+        foreach (var root in roots.All)
+        {
+            if (!root.Kind.IsCoded && (!double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest))
+            {
+                reasons.Add(root.Kind.RangeCode);
+            }
+        }
+
+        // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
+        if (reasons.Count == 0 || missing.Count > 0)
+        {
+            reasons.AddRange(definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code));
+        }
+
+        if (reasons.Count > 0)
+        {
+            return new Computation { Withheld = reasons.MinBy(Physiology.Withheld.Rank), Missing = missing };
+        }
+
+        var value = formula(roots);
+        if (!double.IsFinite(value) || value < definition.Result.Least || value > definition.Result.Greatest)
+        {
+            return new Computation { Withheld = Physiology.Withheld.Impossible };
+        }
+
+        var (uncertainty, shares) = Budget.Of(roots, formula);
+        if (uncertainty > definition.GreatestRelativeUncertainty * Math.Abs(value))
+        {
+            return new Computation { Withheld = Physiology.Withheld.UncertaintyTooLarge };
+        }
+
+        return new Computation
+        {
+            Value = value,
+            Published = Publication.Round(value, definition.Decimals),
+            Uncertainty = uncertainty,
+            Shares = shares,
+            Flags = FlagsOf(definition, roots, value),
+            Variant = Options(definition.Result.Needs, roots).Select(option => option.Variant).FirstOrDefault(variant => variant is not null),
+        };
+    }
+
+    private static string[] FlagsOf(Definition definition, Roots roots, double value)
+    {
+        var flags = new SortedSet<string>(StringComparer.Ordinal);
+        flags.UnionWith(Options(definition.Result.Needs, roots).Select(option => option.Flag).OfType<string>());
+        flags.UnionWith(definition.FlagRules.Where(rule => rule.Raised(roots)).Select(rule => rule.Flag));
+        if (value < definition.Usual.Least || value > definition.Usual.Greatest)
+        {
+            flags.Add(Physiology.Flags.OutsideUsual);
+        }
+
+        return [.. flags];
+    }
+
+    /// <summary>The options used along the whole chain.</summary>
+    private static IEnumerable<Option> Options(IReadOnlyList<Slot> needs, Roots roots)
+    {
+        foreach (var option in needs.Select(slot => slot.Chosen(roots)).OfType<Option>())
+        {
+            yield return option;
+            foreach (var kind in option.Terms.Select(term => term.Present(roots)).OfType<Kind>().Where(kind => !roots.Has(kind)))
+            {
+                foreach (var inner in Options(kind.Needs, roots))
+                {
+                    yield return inner;
+                }
+            }
+        }
+    }
+
+    private static void FindMissing(IReadOnlyList<Slot> needs, Roots roots, List<string> reasons, List<string> missing)
+    {
+        foreach (var slot in needs.Where(slot => !roots.Has(slot)))
+        {
+            // A slot that only another definition can fill is missing whatever that definition lacks.
+            var derived = slot.Options.Count == 1 ? slot.Kinds.SingleOrDefault(kind => kind.Formula is not null) : null;
+            if (derived is null)
+            {
+                reasons.Add(slot.Missing);
+                missing.Add(slot.Name);
+            }
+            else
+            {
+                FindMissing(derived.Needs, roots, reasons, missing);
+            }
+        }
+    }
+}

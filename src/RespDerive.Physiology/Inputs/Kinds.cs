@@ -1,0 +1,79 @@
+using static RespDerive.Physiology.Inputs.Origin;
+
+namespace RespDerive.Physiology.Inputs;
+
+/// <summary>The closed list of kinds that are read or given; results of definitions are kinds too, declared in their own files.</summary>
+public static class Kinds
+{
+#pragma warning disable CS1591 // each line says what it is
+    private const string GasAnalyser = "analyser and pre-analytic error, own judgement; worst case CLIA 2025 ±15 % (from memory)";
+    private const string Ventilator = "ISO 80601-2-12 (from memory)";
+    private const string OxygenMonitor = "ISO 80601-2-55 (from memory)";
+    private const string Judgement = "own judgement";
+    private static readonly Tolerance Pressure = Tolerance.Limit(2, 0.04, Ventilator, zero: true);
+    private static readonly Tolerance Volume = Tolerance.Limit(4, 0.15, Ventilator);
+    private static readonly Tolerance Rate = Tolerance.Limit(1, 0, Judgement + ": displayed integer");
+
+    // blood gas
+    public static readonly Kind PaO2 = Kind.Quantity("pao2", "PaO2", "arterial oxygen partial pressure", Laboratory, "mm[Hg]", 10, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
+    public static readonly Kind Po2 = Kind.Quantity("po2-unspecified", "PO2", "oxygen partial pressure, site of sample unspecified", Laboratory, "mm[Hg]", 5, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
+    public static readonly Kind PaCO2 = Kind.Quantity("paco2", "PaCO2", "arterial carbon dioxide partial pressure", Laboratory, "mm[Hg]", 5, 200, Tolerance.Deviation(1, 0.025, "analyser quality control, from memory; worst case ±5 mm[Hg]"));
+    public static readonly Kind Pco2 = Kind.Quantity("pco2-unspecified", "PCO2", "carbon dioxide partial pressure, site of sample unspecified", Laboratory, "mm[Hg]", 5, 200, Tolerance.Deviation(1, 0.025, "analyser quality control, from memory"));
+
+    // oxygen
+    public static readonly Kind FiO2Measured = Kind.Quantity("fio2-measured", "FiO2meas", "inspired oxygen fraction, measured", Measurement, "1", 0.205, 1, Tolerance.Limit(0.025, 0.025, OxygenMonitor), Withheld.Fio2UnitImplausible);
+    public static readonly Kind FiO2Set = Kind.Quantity("fio2-set", "FiO2set", "inspired oxygen fraction, set", Setting, "1", 0.205, 1, Tolerance.Limit(0.03, 0, "blender ±3 vol%, own judgement"), Withheld.Fio2UnitImplausible);
+    public static readonly Kind FiO2 = Kind.Quantity("fio2", "FiO2", "inspired oxygen fraction", Setting, "1", 0.205, 1, Tolerance.Limit(0.03, 0, "blender ±3 vol%, own judgement"), Withheld.Fio2UnitImplausible);
+    public static readonly Kind OxygenFlow = Kind.Quantity("oxygen-flow", "O2flow", "supplemental oxygen flow", Measurement, "L/min", 0, 100, Tolerance.Limit(0, 0.1, Judgement));
+    public static readonly Kind SpO2 = Kind.Quantity("spo2", "SpO2", "oxygen saturation by pulse oximetry", Measurement, "%", 40, 100, Tolerance.Deviation(3, 0, "pulse oximetry accuracy 2 to 4 % root mean square, ISO 80601-2-61"));
+
+    // airway pressures
+    public static readonly Kind Plateau = Kind.Quantity("plateau-pressure", "Pplat", "plateau pressure", Measurement, "cm[H2O]", 3, 100, Pressure);
+    public static readonly Kind Peak = Kind.Quantity("peak-inspiratory-pressure", "Ppeak", "peak inspiratory pressure", Measurement, "cm[H2O]", 3, 120, Pressure);
+    public static readonly Kind MeanAirway = Kind.Quantity("mean-airway-pressure", "Pmean", "mean airway pressure", Measurement, "cm[H2O]", 0.5, 60, Pressure);
+    public static readonly Kind PeepTotal = Kind.Quantity("peep-total", "PEEPtot", "total PEEP", Measurement, "cm[H2O]", 0, 50, Pressure);
+    public static readonly Kind Peep = Kind.Quantity("peep", "PEEP", "PEEP, measured or unspecified", Measurement, "cm[H2O]", 0, 50, Pressure);
+    public static readonly Kind PeepSet = Kind.Quantity("peep-set", "PEEPset", "PEEP, set", Setting, "cm[H2O]", 0, 50, Pressure);
+    public static readonly Kind PeepIntrinsic = Kind.Quantity("peep-intrinsic", "PEEPi", "intrinsic PEEP above set PEEP", Measurement, "cm[H2O]", 0, 40, Pressure);
+    public static readonly Kind PressureSupportSet = Kind.Quantity("pressure-support-set", "PSset", "pressure support, set", Setting, "cm[H2O]", 0, 60, Pressure);
+
+    // volumes, rates, flows
+    public static readonly Kind TidalVolumeExpired = Kind.Quantity("tidal-volume-expired", "VT", "expired tidal volume", Measurement, "mL", 10, 3000, Volume);
+    public static readonly Kind TidalVolume = Kind.Quantity("tidal-volume", "VTdel", "delivered tidal volume", Measurement, "mL", 10, 3000, Volume);
+    public static readonly Kind TidalVolumeSet = Kind.Quantity("tidal-volume-set", "VTset", "tidal volume, set", Setting, "mL", 10, 3000, Volume);
+    public static readonly Kind MinuteVolumeExpired = Kind.Quantity("minute-volume-expired", "VE", "expired minute volume", Measurement, "L/min", 0.3, 60, Tolerance.Limit(0, 0.15, Ventilator));
+    public static readonly Kind RateTotal = Kind.Quantity("respiratory-rate-total", "RR", "total breath rate on the ventilator", Measurement, "/min", 2, 120, Rate);
+    public static readonly Kind RateSpontaneous = Kind.Quantity("respiratory-rate-spontaneous", "RRspont", "spontaneous breath rate", Measurement, "/min", 0, 120, Rate);
+    public static readonly Kind RateSet = Kind.Quantity("respiratory-rate-set", "RRset", "breath rate, set", Setting, "/min", 0, 120, Rate);
+    public static readonly Kind RespiratoryRate = Kind.Quantity("respiratory-rate", "RRvital", "respiratory rate", Measurement, "/min", 2, 120, Rate);
+    public static readonly Kind FlowSet = Kind.Quantity("inspiratory-flow-set", "flow", "inspiratory flow, set", Setting, "L/min", 1, 200, Tolerance.Limit(0, 0.1, Judgement));
+
+    // patient, site
+    public static readonly Kind Height = Kind.Quantity("height", "height", "body height", Demographic, "cm", 140, 210, Tolerance.Limit(1, 0, "measured height, own judgement"), Withheld.HeightOutOfRange);
+    public static readonly Kind Sex = Kind.Coded("sex", "sex", "sex used by the formula", Demographic, "female", "male", "unknown");
+    public static readonly Kind Age = Kind.Quantity("age", "age", "age", Demographic, "a", 0, 125, Tolerance.None);
+    public static readonly Kind BarometricPressure = Kind.Quantity("barometric-pressure", "PB", "barometric pressure", Constant, "mm[Hg]", 240, 800, Tolerance.Limit(0.75, 0, "barometer ±1 hPa, own judgement"));
+    public static readonly Kind WaterVapour = Kind.Quantity("water-vapour-pressure", "PH2O", "water vapour pressure in the airways", Constant, "mm[Hg]", 40, 55, Tolerance.None, assumed: 47);
+    public static readonly Kind RespiratoryQuotient = Kind.Quantity("respiratory-quotient", "R", "respiratory exchange ratio", Constant, "1", 0.6, 1.2, Tolerance.Limit(0.1, 0, "assumed 0.8 ± 0.1, own judgement"), assumed: 0.8);
+
+    // circumstances that only gates look at
+    public static readonly Kind Sample = Kind.Coded("sample", "sample", "site of the blood sample", Circumstance, "arterial", "venous", "central venous", "mixed venous", "capillary", "unknown");
+    public static readonly Kind PatientEffort = Kind.Coded("patient-effort", "patient_effort", "breathing efforts of the patient", Circumstance, "false", "true");
+    public static readonly Kind Mode = Kind.Coded("ventilator-mode", "mode", "ventilation mode", Circumstance, "volume control", "pressure control", "spontaneous", "other", "unknown");
+    public static readonly Kind Support = Kind.Coded("respiratory-support", "support", "kind of respiratory support", Circumstance, "invasive ventilation", "non-invasive ventilation", "high-flow oxygen", "low-flow oxygen", "none");
+    public static readonly Kind Waveform = Kind.Coded("flow-waveform", "waveform", "inspiratory flow waveform", Circumstance, "constant", "decelerating", "other");
+    public static readonly Kind Ecls = Kind.Coded("extracorporeal-support", "ecls", "extracorporeal gas exchange", Circumstance, "false", "true");
+    public static readonly Kind FiO2Changed = Kind.Quantity("fio2-changed-before-draw", "FiO2_changed_before_draw", "time since FiO2 was changed", Circumstance, "min", 0, double.MaxValue, Tolerance.None);
+    public static readonly Kind PeepLowered = Kind.Quantity("peep-lowered-before-draw", "PEEP_lowered_before_draw", "time since PEEP was lowered", Circumstance, "min", 0, double.MaxValue, Tolerance.None);
+    public static readonly Kind PeepRaised = Kind.Quantity("peep-raised-before-draw", "PEEP_raised_before_draw", "time since PEEP was raised", Circumstance, "min", 0, double.MaxValue, Tolerance.None);
+#pragma warning restore CS1591
+
+    /// <summary>Every kind of this list.</summary>
+    public static IReadOnlyList<Kind> All { get; } =
+        [.. typeof(Kinds).GetFields().Where(field => field.FieldType == typeof(Kind)).Select(field => (Kind)field.GetValue(null)!)];
+
+    /// <summary>A kind of this list by key; null when there is none.</summary>
+    public static Kind? Find(string key) => ByKey.GetValueOrDefault(key);
+
+    private static readonly Dictionary<string, Kind> ByKey = All.ToDictionary(kind => kind.Key, StringComparer.Ordinal);
+}
