@@ -52,7 +52,7 @@ public sealed record Computation
         // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
         if (reasons.Count == 0 || missing.Count > 0)
         {
-            reasons.AddRange(definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code));
+            reasons.AddRange(Tripped(definition, roots));
         }
 
         if (reasons.Count > 0)
@@ -82,6 +82,10 @@ public sealed record Computation
             Variant = Options(definition.Result.Needs, roots).Select(option => option.Variant).FirstOrDefault(variant => variant is not null),
         };
     }
+
+    /// <summary>Codes of the gates that trip.</summary>
+    public static IEnumerable<string> Tripped(Definition definition, Roots roots) =>
+        definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code);
 
     private static string[] FlagsOf(Definition definition, Roots roots, double value)
     {

@@ -24,7 +24,7 @@ public static class Slots
     /// <summary>End-expiratory pressure for mechanics: total over its sum over measured over set.</summary>
     public static readonly Slot Peep = new("total PEEP",
         [
-            new Option(Kinds.PeepTotal, Near),
+            new Option(Kinds.PeepTotal, new Pairing.SameManoeuvre(FiveMinutes)),
             new Option([new Term(Kinds.PeepSet, new Pairing.InForce()), new Term(Kinds.PeepIntrinsic, Near)]),
             new Option([new Term(Kinds.Peep, Near), new Term(Kinds.PeepIntrinsic, Near)]),
             new Option(Kinds.Peep, Near, Flags.PeepNotTotal, "peep-not-total"),

@@ -1,0 +1,35 @@
+namespace RespDerive.Timeline;
+
+/// <summary>When two outcomes of one identity say the same, so that nothing need be published.</summary>
+public static class OutcomeComparison
+{
+    /// <summary>
+    /// Same status class, value, unit, uncertainty, flags, root versions, definition revision and policy values used;
+    /// neither the hash of the policy document nor the software version counts.
+    /// </summary>
+    public static bool Same(Outcome a, Outcome b) =>
+        a.Withheld == b.Withheld
+        && a.Revision == b.Revision
+        && a.Patient == b.Patient
+        && a.Encounter == b.Encounter
+        && a.AtText == b.AtText
+        && a.AnchorReference == b.AnchorReference
+        && (a.Withheld is not null || SameValue(a, b));
+
+    private static bool SameValue(Outcome a, Outcome b) =>
+        Nullable.Equals(a.Value, b.Value)
+        && a.Published == b.Published
+        && a.Unit == b.Unit
+        && a.Code == b.Code
+        && Nullable.Equals(a.Uncertainty, b.Uncertainty)
+        && a.Preliminary == b.Preliminary
+        && a.InputCorrected == b.InputCorrected
+        && a.Variant == b.Variant
+        && Equals(a.Person, b.Person)
+        && a.Flags.SequenceEqual(b.Flags, StringComparer.Ordinal)
+        && a.Inputs.Count == b.Inputs.Count
+        && a.Inputs.Zip(b.Inputs).All(pair => SameInput(pair.First, pair.Second));
+
+    private static bool SameInput(UsedInput a, UsedInput b) =>
+        a.Kind == b.Kind && a.Value.Equals(b.Value) && a.GateOnly == b.GateOnly && a.Assumed == b.Assumed && a.Readings.SequenceEqual(b.Readings);
+}

@@ -1,0 +1,68 @@
+using RespDerive.Physiology.Inputs;
+
+namespace RespDerive.Timeline;
+
+/// <summary>Evidence that the patient breathes, or does not breathe, on top of the ventilator around a plateau.</summary>
+internal static class Effort
+{
+    /// <summary>Breaths per minute above the set rate that show triggering.</summary>
+    private const double Triggered = 2;
+
+    private const double No = 0;
+    private const double Yes = 1;
+    private static readonly Span Near = new(Reach.EffortWindow, Reach.EffortWindow, default);
+    private static readonly Span Setting = new(Reach.SettlingWindow, Reach.EffortWindow, Reach.SettingWindow);
+    private static readonly double Spontaneous = Kinds.Mode.Codes.ToList().IndexOf("spontaneous");
+
+    public static IEnumerable<(Kind Kind, Span Span)> Reads =>
+    [
+        (Kinds.RateSpontaneous, Near), (Kinds.RateTotal, Near),
+        (Kinds.RateSet, Setting), (Kinds.Mode, Setting), (Kinds.PressureSupportSet, Setting),
+    ];
+
+    /// <summary>Effort, no effort, or null when there is no evidence either way.</summary>
+    public static Circumstances.Finding? Tell(Reading anchor, Slice slice, TimeSpan maxAge)
+    {
+        var from = anchor.At.Minus(Reach.EffortWindow);
+        var to = anchor.At.Plus(Reach.EffortWindow);
+        var passive = new List<Reading>();
+        foreach (var rate in slice.Between(Kinds.RateSpontaneous, from, to))
+        {
+            if (rate.Usable && rate.Value > 0)
+            {
+                return new(Yes, [rate]);
+            }
+
+            if (rate.Usable)
+            {
+                passive.Add(rate);
+            }
+        }
+
+        foreach (var total in slice.Between(Kinds.RateTotal, from, to))
+        {
+            if (total.Usable && slice.Last([Kinds.RateSet], total.At, maxAge) is { Usable: true } set)
+            {
+                if (total.Value >= set.Value + Triggered)
+                {
+                    return new(Yes, [total, set]);
+                }
+
+                passive.AddRange([total, set]);
+            }
+        }
+
+        if (slice.Last([Kinds.Mode], anchor.At, maxAge) is { Usable: true } mode && mode.Value.Equals(Spontaneous))
+        {
+            return new(Yes, [mode]);
+        }
+
+        if (slice.Last([Kinds.PressureSupportSet], anchor.At, maxAge) is { Usable: true, Value: > 0 } support
+            && slice.Last([Kinds.RateSet], anchor.At, maxAge) is not { Usable: true, Value: > 0 })
+        {
+            return new(Yes, [support]);
+        }
+
+        return passive.Count > 0 ? new(No, [.. passive.Distinct()]) : null;
+    }
+}
