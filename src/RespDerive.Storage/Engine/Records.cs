@@ -1,0 +1,54 @@
+using System.Text.Json;
+using System.Text.Json.Serialization;
+using RespDerive.Physiology.Inputs;
+using RespDerive.Timeline;
+
+namespace RespDerive.Storage;
+
+/// <summary>Readings, persons and outcomes as bytes.</summary>
+internal sealed class Records(Func<string, Kind?> kinds)
+{
+    private readonly RecordsJson _json = new(new JsonSerializerOptions(RecordsJson.Default.Options) { Converters = { new KindConverter(kinds) } });
+
+    public bool Knows(string kind) => kinds(kind) is not null;
+
+    public byte[] Bytes(Reading reading) => JsonSerializer.SerializeToUtf8Bytes(reading, _json.Reading);
+
+    public byte[] Bytes(Person person) => JsonSerializer.SerializeToUtf8Bytes(person, _json.Person);
+
+    /// <summary>Candidates are left out: they are told on demand, the core being pure.</summary>
+    public byte[] Bytes(Outcome outcome) => JsonSerializer.SerializeToUtf8Bytes(outcome with { Considered = [] }, _json.Outcome);
+
+    public Reading Reading(byte[] bytes) => JsonSerializer.Deserialize(bytes, _json.Reading)!;
+
+    public Person Person(byte[] bytes) => JsonSerializer.Deserialize(bytes, _json.Person)!;
+
+    public Outcome Outcome(byte[] bytes) => JsonSerializer.Deserialize(bytes, _json.Outcome)!;
+}
+
+/// <summary>Generated serialisers. Every property with a default is always written, since a missing one would be read as null.</summary>
+[JsonSourceGenerationOptions(
+    DefaultIgnoreCondition = JsonIgnoreCondition.WhenWritingNull,
+    IgnoreReadOnlyProperties = true,
+    NumberHandling = JsonNumberHandling.AllowNamedFloatingPointLiterals,
+    Converters = [typeof(KindConverter)])]
+[JsonSerializable(typeof(Reading))]
+[JsonSerializable(typeof(Person))]
+[JsonSerializable(typeof(Outcome))]
+internal sealed partial class RecordsJson : JsonSerializerContext;
+
+/// <summary>A kind as its key.</summary>
+internal sealed class KindConverter(Func<string, Kind?> kinds) : JsonConverter<Kind>
+{
+    /// <summary>For the generated code only; <see cref="Records"/> puts one with the caller's kinds in its place.</summary>
+    public KindConverter() : this(Kinds.Find)
+    {
+    }
+
+    /// <inheritdoc/>
+    public override Kind Read(ref Utf8JsonReader reader, Type typeToConvert, JsonSerializerOptions options) =>
+        reader.GetString() is { } key && kinds(key) is { } kind ? kind : throw new JsonException("unknown kind");
+
+    /// <inheritdoc/>
+    public override void Write(Utf8JsonWriter writer, Kind value, JsonSerializerOptions options) => writer.WriteStringValue(value.Key);
+}

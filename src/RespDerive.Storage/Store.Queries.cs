@@ -1,0 +1,33 @@
+using RespDerive.Physiology;
+
+namespace RespDerive.Storage;
+
+public sealed partial class Store
+{
+    /// <summary>Current outcomes with their delivery state, the latest event times first; one withdrawn by a person lists as withheld.</summary>
+    public IReadOnlyList<Delivery> Outcomes(OutcomeFilter filter)
+    {
+        ArgumentNullException.ThrowIfNull(filter);
+        return _readers.Read(session => session.All(Sql.ListOutcomes, ReadDelivery, filter.Patient, filter.Definition, filter.Code,
+            filter.Withheld is { } withheld ? withheld ? 1 : 0 : null, filter.From?.UtcTicks, filter.To?.UtcTicks, filter.Limit,
+            Withheld.WithdrawnByPerson));
+    }
+
+    /// <summary>Totals.</summary>
+    public Counts Counts() => _readers.Read(session => new Counts
+    {
+        Received = Tally(session, Tallies.Received),
+        Repeats = Tally(session, Tallies.Repeats),
+        VersionResets = Tally(session, Tallies.VersionResets),
+        Readings = session.Number(Sql.CountReadings) ?? 0,
+        Results = session.Number(Sql.CountResults) ?? 0,
+        Revisions = Tally(session, Tallies.Revisions),
+        Retractions = Tally(session, Tallies.Retractions),
+        Withheld = session.Number(Sql.CountWithheld) ?? 0,
+        Delivered = Tally(session, Tallies.Delivered),
+        Refused = session.Number(Sql.CountParked) ?? 0,
+        Pending = session.Number(Sql.CountPending) ?? 0,
+    });
+
+    private static long Tally(Session session, string name) => session.Number(Sql.Tally, name) ?? 0;
+}
