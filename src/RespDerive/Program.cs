@@ -1,4 +1,5 @@
 using System.CommandLine;
+using System.CommandLine.Invocation;
 using RespDerive.Commands;
 
 namespace RespDerive;
@@ -12,8 +13,18 @@ internal static class Program
     internal static async Task<int> RunAsync(IReadOnlyList<string> args, InvocationConfiguration configuration)
     {
         var parsed = Root().Parse(args);
-        var code = await parsed.InvokeAsync(configuration);
-        return parsed.Errors.Count > 0 ? Exit.Usage : code;
+        if (parsed.Action is not ParseErrorAction)
+        {
+            return await parsed.InvokeAsync(configuration);
+        }
+
+        foreach (var error in parsed.Errors)
+        {
+            await configuration.Error.WriteLineAsync(error.Message);
+        }
+
+        await configuration.Error.WriteLineAsync("See 'respderive --help'.");
+        return Exit.Usage;
     }
 
     private static RootCommand Root()
@@ -21,6 +32,12 @@ internal static class Program
         var root = new RootCommand("Derived respiratory values: computed once, correctly paired, with their evidence.\nA derived number is arithmetic on the values given; it is not a diagnosis, an alarm or an order.");
         root.Subcommands.Add(CatalogueCommand.Create());
         root.Subcommands.Add(ComputeCommand.Create());
+        Examples.Add(root, """
+            Examples:
+              respderive catalogue
+              respderive compute pf-ratio "pao2=90 mm[Hg]" fio2=0.40
+              respderive compute --help
+            """);
         return root;
     }
 }

@@ -29,6 +29,9 @@ public sealed record HandInput(Kind Kind, double Value, string? Given, double Sh
 /// <param name="Unused">Names of known values that had no part in it, as typed.</param>
 public sealed record ByHand(Definition Definition, Computation Computation, IReadOnlyList<HandInput> Inputs, IReadOnlyList<string> Unused)
 {
+    /// <summary>Results of other definitions computed on the way, unrounded, in their canonical units; empty when withheld.</summary>
+    public IReadOnlyList<(Kind Kind, double Value)> Intermediates { get; init; } = [];
+
     /// <summary>Computes a definition from values given by name.</summary>
     /// <exception cref="UnusableRequestException">The request itself is wrong; a value merely out of range is withheld instead.</exception>
     public static ByHand Compute(Definition definition, IEnumerable<Given> given, Catalogue? catalogue = null)
@@ -46,7 +49,10 @@ public sealed record ByHand(Definition Definition, Computation Computation, IRea
         return new ByHand(definition, computation,
             [.. roots.All.Where(root => used.Contains(root.Kind)).Select(root =>
                 new HandInput(root.Kind, root.Value, root.Assumed ? null : named[root.Kind].Given.Typed, shares.GetValueOrDefault(root.Kind), !chain.Contains(root.Kind)))],
-            [.. named.Values.Where(entry => !used.Contains(entry.Root.Kind)).Select(entry => entry.Given.Name)]);
+            [.. named.Values.Where(entry => !used.Contains(entry.Root.Kind)).Select(entry => entry.Given.Name)])
+        {
+            Intermediates = computation.Withheld is null ? [.. chain.Where(kind => kind.Formula is not null && !roots.Has(kind)).Select(kind => (kind, roots[kind]))] : [],
+        };
     }
 
     private static Dictionary<Kind, (Given Given, Root Root)> Read(IEnumerable<Given> given, Vocabulary vocabulary)

@@ -7,9 +7,7 @@ namespace RespDerive.Commands;
 /// <summary><c>catalogue</c>: what is derived, or everything about one value.</summary>
 internal static class CatalogueCommand
 {
-    private const string Description = """
-        Lists the definitions, or shows one with its equation, inputs, gates, limits and sources.
-
+    private const string Help = """
         Examples:
           respderive catalogue
           respderive catalogue driving-pressure
@@ -20,7 +18,8 @@ internal static class CatalogueCommand
     {
         var definition = new Argument<string?>("DEFINITION") { Description = "Key of the definition; all are listed without it.", Arity = ArgumentArity.ZeroOrOne };
         var output = OutputOption.Create();
-        var command = new Command("catalogue", Description) { definition, output };
+        var command = new Command("catalogue", "Lists the definitions, or shows one with its equation, inputs, gates, limits and sources.") { definition, output };
+        Examples.Add(command, Help);
         command.SetAction(parsed => Show(parsed.GetValue(definition), parsed.GetValue(output) == "json", parsed.InvocationConfiguration));
         return command;
     }

@@ -6,9 +6,7 @@ namespace RespDerive.Commands;
 /// <summary><c>compute</c>: one definition by hand, or a stream of them.</summary>
 internal static class ComputeCommand
 {
-    private const string Description = """
-        Computes one value by hand, with its uncertainty and what it rests on.
-
+    private const string Help = """
         Names are keys or symbols (see 'catalogue DEFINITION') and case-sensitive. A value may carry a UCUM unit.
 
         Examples:
@@ -27,7 +25,7 @@ internal static class ComputeCommand
         var values = new Argument<string[]>("name=value") { Description = "An input, such as \"pao2=90 mm[Hg]\", sex=male or fio2=missing.", Arity = ArgumentArity.ZeroOrMore };
         var lines = new Option<bool>("--lines") { Description = "Reads one JSON request a line from standard input and answers each on a line." };
         var output = OutputOption.Create();
-        var command = new Command("compute", Description) { definition, values, lines, output };
+        var command = new Command("compute", "Computes one value by hand, with its uncertainty and what it rests on.") { definition, values, lines, output };
         command.Validators.Add(result =>
         {
             if (result.GetValue(lines) == result.GetValue(definition) is not null)
@@ -35,6 +33,7 @@ internal static class ComputeCommand
                 result.AddError("Give either a DEFINITION with its inputs, or --lines.");
             }
         });
+        Examples.Add(command, Help);
         command.SetAction((parsed, cancel) => parsed.GetValue(lines)
             ? ComputeLines.RunAsync(Console.In, parsed.InvocationConfiguration.Output, cancel)
             : Task.FromResult(One(parsed.GetValue(definition)!, parsed.GetValue(values)!, parsed.GetValue(output) == "json", parsed.InvocationConfiguration)));

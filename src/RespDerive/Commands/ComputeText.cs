@@ -23,7 +23,7 @@ internal static class ComputeText
 
         if (hand.Inputs.Count > 0)
         {
-            text.Append(Columns.Of([.. hand.Inputs.Select(input => Row(input, computed)), .. SharedRows(computed)])).Append('\n');
+            text.Append(Columns.Of([.. hand.Inputs.Select(input => Row(input, computed)), .. SharedRows(computed), .. hand.Intermediates.Select(Row)])).Append('\n');
         }
 
         text.Append(Columns.Note("Equation", definition.Equation));
@@ -45,8 +45,11 @@ internal static class ComputeText
         $"{input.Kind.Name} ({input.Kind.Symbol})",
         Value(input),
         input.Assumed ? "assumed" : input.CheckedOnly ? "checked only" : "",
-        computed.Withheld is null && !input.CheckedOnly ? $"{Figures.Percent(input.Share)} of the variance" : "",
+        computed.Withheld is null && !input.CheckedOnly && input.Code is null ? $"{Figures.Percent(input.Share)} of the variance" : "",
     ];
+
+    private static string[] Row((Kind Kind, double Value) intermediate) =>
+        [$"{intermediate.Kind.Name} ({intermediate.Kind.Symbol})", Figures.Plain(intermediate.Value) + Figures.Unit(intermediate.Kind.Unit), "computed", ""];
 
     private static IEnumerable<string[]> SharedRows(Computation computed) => computed.Shares.Where(share => share.Transducer is not null)
         .Select(share => new[] { $"zero offset shared by transducer {share.Transducer}", "", "", $"{Figures.Percent(share.Fraction)} of the variance" });
