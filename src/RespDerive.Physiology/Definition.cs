@@ -65,6 +65,13 @@ public abstract class Definition
     /// <summary>Worked examples.</summary>
     public abstract IReadOnlyList<Vector> Vectors { get; }
 
+    /// <summary>Symbols that mean another kind here than in the general vocabulary.</summary>
+    public virtual IReadOnlyDictionary<string, Kind> Symbols => System.Collections.Immutable.ImmutableDictionary<string, Kind>.Empty;
+
+    /// <summary>The slots by which the value can be had from these roots: its own, else those of the identity.</summary>
+    internal IReadOnlyList<Slot> Path(Roots roots) =>
+        ByIdentity.Count > 0 && !Result.Needs.All(roots.Has) && ByIdentity.All(roots.Has) ? ByIdentity : Result.Needs;
+
     /// <summary>Kinds that only gates and flag rules look at.</summary>
     public IEnumerable<Kind> Watched => Gates.SelectMany(gate => gate.Reads).Concat(FlagRules.SelectMany(rule => rule.Reads)).Distinct();
 }

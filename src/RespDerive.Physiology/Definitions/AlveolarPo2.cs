@@ -46,6 +46,7 @@ public sealed class AlveolarPo2 : Definition
     /// <inheritdoc/>
     public override IReadOnlyList<Gate> Gates =>
     [
+        CommonGates.ArterialCarbonDioxide,
         CommonGates.Equilibrated with { TrippedBy = [.. Example, ("FiO2_changed_before_draw", 4, "min")] },
         CommonGates.Ecls with { TrippedBy = [.. Example, ("ecls", "true")] },
     ];

@@ -1,3 +1,4 @@
+using RespDerive.Physiology.Definitions;
 using RespDerive.Physiology.Inputs;
 
 namespace RespDerive.Physiology;
@@ -16,6 +17,11 @@ public static class CommonGates
         x => (x.Has(Kinds.Sample) && x.Code(Kinds.Sample) != "arterial") || (x.Has(Kinds.Po2) && !x.Has(Kinds.PaO2) && x.Code(Kinds.Sample) != "arterial"),
         ("PO2", 42, "mm[Hg]"), ("FiO2", 0.4, "1"), ("sample", "venous"));
 
+    /// <summary>As <see cref="Arterial"/>, for values whose only gas is the carbon dioxide tension.</summary>
+    public static readonly Gate ArterialCarbonDioxide = new(Withheld.NotArterial, "the sample is not arterial, or its site is not known", [Kinds.Sample],
+        x => x.Has(Kinds.Sample) && x.Code(Kinds.Sample) != "arterial",
+        ("PaCO2", 46, "mm[Hg]"), ("FiO2", 0.4, "1"), ("PB", 760, "mm[Hg]"), ("sample", "venous"));
+
     /// <summary>FiO2 must have been steady for 10 min before the draw (Cakar 2001: 10 min adequate without chronic lung disease).</summary>
     public static readonly Gate Equilibrated = new(Withheld.NotEquilibrated, "FiO2 was changed less than 10 min before the draw", [Kinds.FiO2Changed],
         x => x.Has(Kinds.FiO2Changed) && x[Kinds.FiO2Changed] < 10,
@@ -33,9 +39,26 @@ public static class CommonGates
     public static readonly Gate Passive = new(Withheld.PatientNotPassive, "the patient makes breathing efforts", [Kinds.PatientEffort],
         x => x.Code(Kinds.PatientEffort) == "true", ("VT", 420, "mL"), ("Pplat", 24, "cm[H2O]"), ("PEEPtot", 10, "cm[H2O]"), ("patient_effort", "true"));
 
+    /// <summary>A peak pressure contains the resistive drop and never stands in for a plateau; a given compliance needs neither.</summary>
+    public static readonly Gate PlateauMeasured = new(Withheld.NoPlateau, "only a peak pressure is given, no plateau pressure of an end-inspiratory hold", [],
+        x => x.Has(Kinds.Peak) && !x.Has(Kinds.Plateau) && !x.Has(StaticCompliance.Value),
+        ("VT", 420, "mL"), ("Ppeak", 31, "cm[H2O]"), ("PEEPtot", 10, "cm[H2O]")) { ReadsByHand = [Kinds.Peak] };
+
+    /// <summary>Pressure that distends the respiratory system must be above zero.</summary>
+    public static readonly Gate PlateauAbovePeep = new(Withheld.NonPositiveDrivingPressure, "plateau pressure is not above total PEEP", [],
+        x => x.Has(Slots.Plateau) && x.Has(Slots.Peep) && x[Slots.Plateau] <= x[Slots.Peep],
+        ("VT", 420, "mL"), ("Pplat", 12, "cm[H2O]"), ("PEEPtot", 12, "cm[H2O]"));
+
     /// <summary>The formula is for adults.</summary>
     public static readonly Gate Adult = new(Withheld.AgeOutOfRange, "the patient is under 18", [Kinds.Age],
         x => x.Has(Kinds.Age) && x[Kinds.Age] < 18, ("sex", "male"), ("height", 170, "cm"), ("age", 12, "a"));
+
+    /// <summary>Predicted weight has one formula for each sex and none for an unknown one.</summary>
+    public static readonly Gate SexKnown = new(Withheld.SexUnknown, "the sex is unknown", [],
+        x => x.Code(Kinds.Sex) == "unknown" && !x.Has(PredictedBodyWeight.Value), ("sex", "unknown"), ("height", 170, "cm"));
+
+    /// <summary>Raised when the age is not known to be of an adult; a given predicted weight answers for itself.</summary>
+    public static readonly FlagRule AgeUnconfirmed = new(Flags.AgeUnconfirmed, [Kinds.Age], x => !x.Has(Kinds.Age) && !x.Has(PredictedBodyWeight.Value));
 
     /// <summary>Raised when nothing shows whether the patient was passive.</summary>
     public static readonly FlagRule PassivityUnconfirmed = new(Flags.PassivityUnconfirmed, [Kinds.PatientEffort], x => !x.Has(Kinds.PatientEffort));

@@ -35,22 +35,13 @@ public sealed record Computation
         var reasons = new List<string>();
         var missing = new List<string>();
         var formula = definition.Result.Formula!;
-        var byIdentity = definition.ByIdentity.Count > 0 && definition.ByIdentity.All(roots.Has);
-        if (!byIdentity)
-        {
-            FindMissing(definition.Result.Needs, roots, reasons, missing);
-        }
-
-        foreach (var root in roots.All)
-        {
-            if (!root.Kind.IsCoded && (!double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest))
-            {
-                reasons.Add(root.Kind.RangeCode);
-            }
-        }
+        var path = definition.Path(roots);
+        FindMissing(path, roots, reasons, missing);
+        var nonsense = roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode).ToArray();
+        reasons.AddRange(nonsense);
 
         // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
-        if (reasons.Count == 0 || missing.Count > 0)
+        if (nonsense.Length == 0)
         {
             reasons.AddRange(definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code));
         }
@@ -60,14 +51,15 @@ public sealed record Computation
             return new Computation { Withheld = reasons.MinBy(Physiology.Withheld.Rank), Missing = missing };
         }
 
+        var steps = Chain.Steps(path, roots).ToArray();
         var value = formula(roots);
-        if (!double.IsFinite(value) || value < definition.Result.Least || value > definition.Result.Greatest)
+        if (IsImpossible(definition.Result, value) || steps.Any(step => !roots.Has(step.Kind) && IsImpossible(step.Kind, step.Kind.Formula!(roots))))
         {
             return new Computation { Withheld = Physiology.Withheld.Impossible };
         }
 
         var (uncertainty, shares) = Budget.Of(roots, formula);
-        if (uncertainty > definition.GreatestRelativeUncertainty * Math.Abs(value))
+        if (!double.IsFinite(uncertainty) || uncertainty > definition.GreatestRelativeUncertainty * Math.Abs(value))
         {
             return new Computation { Withheld = Physiology.Withheld.UncertaintyTooLarge };
         }
@@ -78,15 +70,20 @@ public sealed record Computation
             Published = Publication.Round(value, definition.Decimals),
             Uncertainty = uncertainty,
             Shares = shares,
-            Flags = FlagsOf(definition, roots, value),
-            Variant = Options(definition.Result.Needs, roots).Select(option => option.Variant).FirstOrDefault(variant => variant is not null),
+            Flags = FlagsOf(definition, steps, roots, value),
+            Variant = steps.Select(step => step.Option.Variant).FirstOrDefault(variant => variant is not null),
         };
     }
 
-    private static string[] FlagsOf(Definition definition, Roots roots, double value)
+    private static bool IsNonsense(Root root) =>
+        !root.Kind.IsCoded && (!double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest);
+
+    private static bool IsImpossible(Kind kind, double value) => !double.IsFinite(value) || value < kind.Least || value > kind.Greatest;
+
+    private static string[] FlagsOf(Definition definition, IEnumerable<Step> steps, Roots roots, double value)
     {
         var flags = new SortedSet<string>(StringComparer.Ordinal);
-        flags.UnionWith(Options(definition.Result.Needs, roots).Select(option => option.Flag).OfType<string>());
+        flags.UnionWith(steps.Select(step => step.Option.Flag).OfType<string>());
         flags.UnionWith(definition.FlagRules.Where(rule => rule.Raised(roots)).Select(rule => rule.Flag));
         if (value < definition.Usual.Least || value > definition.Usual.Greatest)
         {
@@ -94,22 +91,6 @@ public sealed record Computation
         }
 
         return [.. flags];
-    }
-
-    /// <summary>The options used along the whole chain.</summary>
-    private static IEnumerable<Option> Options(IReadOnlyList<Slot> needs, Roots roots)
-    {
-        foreach (var option in needs.Select(slot => slot.Chosen(roots)).OfType<Option>())
-        {
-            yield return option;
-            foreach (var kind in option.Terms.Select(term => term.Present(roots)).OfType<Kind>().Where(kind => !roots.Has(kind)))
-            {
-                foreach (var inner in Options(kind.Needs, roots))
-                {
-                    yield return inner;
-                }
-            }
-        }
     }
 
     private static void FindMissing(IReadOnlyList<Slot> needs, Roots roots, List<string> reasons, List<string> missing)

@@ -1,8 +1,18 @@
+using System.Globalization;
+
 namespace RespDerive.Physiology;
 
 /// <summary>A value given by hand: a number with its UCUM unit (null = canonical), or a code.</summary>
-public sealed record Given(string Name, decimal? Value, string? Unit, string? Code)
+/// <param name="Name">Key or symbol of the kind.</param>
+/// <param name="Value">The number as typed; null for a code.</param>
+/// <param name="Unit">UCUM unit of the number; null for the canonical one.</param>
+/// <param name="Code">The code; null for a number.</param>
+/// <param name="Transducer">Numbers with the same non-null mark share the zero offset of one transducer.</param>
+public sealed record Given(string Name, decimal? Value, string? Unit, string? Code, string? Transducer = null)
 {
+    /// <summary>The value as it was typed.</summary>
+    public string Typed => Code ?? (Unit is null or "1" ? Value!.Value.ToString(CultureInfo.InvariantCulture) : string.Create(CultureInfo.InvariantCulture, $"{Value} {Unit}"));
+
     /// <summary>A number with a unit.</summary>
     public static implicit operator Given((string Name, double Value, string Unit) given) => new(given.Name, (decimal)given.Value, given.Unit, null);
 

@@ -36,6 +36,8 @@ public static class Kinds
     public static readonly Kind PeepSet = Kind.Quantity("peep-set", "PEEPset", "PEEP, set", Setting, "cm[H2O]", 0, 50, Pressure);
     public static readonly Kind PeepIntrinsic = Kind.Quantity("peep-intrinsic", "PEEPi", "intrinsic PEEP above set PEEP", Measurement, "cm[H2O]", 0, 40, Pressure);
     public static readonly Kind PressureSupportSet = Kind.Quantity("pressure-support-set", "PSset", "pressure support, set", Setting, "cm[H2O]", 0, 60, Pressure);
+    public static readonly Kind EsophagealEndInspiratory = Kind.Quantity("esophageal-pressure-end-inspiratory", "Pes_ei", "esophageal pressure at end-inspiration", Measurement, "cm[H2O]", -30, 80, Tolerance.Deviation(3, 0, Judgement + ": ±2 cm[H2O] plus position and filling of the balloon"));
+    public static readonly Kind EsophagealEndExpiratory = Kind.Quantity("esophageal-pressure-end-expiratory", "Pes_ee", "esophageal pressure at end-expiration", Measurement, "cm[H2O]", -30, 60, Tolerance.Deviation(3, 0, Judgement + ": ±2 cm[H2O] plus position and filling of the balloon"));
 
     // volumes, rates, flows
     public static readonly Kind TidalVolumeExpired = Kind.Quantity("tidal-volume-expired", "VT", "expired tidal volume", Measurement, "mL", 10, 3000, Volume);
