@@ -1,1 +1,43 @@
-Console.WriteLine("respderive");
+using System.CommandLine;
+using System.CommandLine.Invocation;
+using RespDerive.Commands;
+
+namespace RespDerive;
+
+/// <summary>The command line.</summary>
+internal static class Program
+{
+    public static Task<int> Main(string[] args) => RunAsync(args, new InvocationConfiguration());
+
+    /// <summary>Parses and runs; what is written goes to the writers of the configuration.</summary>
+    internal static async Task<int> RunAsync(IReadOnlyList<string> args, InvocationConfiguration configuration)
+    {
+        var parsed = Root().Parse(args);
+        if (parsed.Action is not ParseErrorAction)
+        {
+            return await parsed.InvokeAsync(configuration);
+        }
+
+        foreach (var error in parsed.Errors)
+        {
+            await configuration.Error.WriteLineAsync(error.Message);
+        }
+
+        await configuration.Error.WriteLineAsync("See 'respderive --help'.");
+        return Exit.Usage;
+    }
+
+    private static RootCommand Root()
+    {
+        var root = new RootCommand("Derived respiratory values: computed once, correctly paired, with their evidence.\nA derived number is arithmetic on the values given; it is not a diagnosis, an alarm or an order.");
+        root.Subcommands.Add(CatalogueCommand.Create());
+        root.Subcommands.Add(ComputeCommand.Create());
+        Examples.Add(root, """
+            Examples:
+              respderive catalogue
+              respderive compute pf-ratio "pao2=90 mm[Hg]" fio2=0.40
+              respderive compute --help
+            """);
+        return root;
+    }
+}

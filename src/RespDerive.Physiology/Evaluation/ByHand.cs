@@ -11,8 +11,9 @@ public sealed class UnusableRequestException(string message) : Exception(message
 /// <param name="Kind">What it is.</param>
 /// <param name="Value">Canonical unit, or the index of the code.</param>
 /// <param name="Given">As typed; null when assumed.</param>
-/// <param name="Share">Share of the variance; 0 for what only gates look at.</param>
-public sealed record HandInput(Kind Kind, double Value, string? Given, double Share)
+/// <param name="Share">Share of the variance.</param>
+/// <param name="CheckedOnly">True for what only gates and flag rules looked at.</param>
+public sealed record HandInput(Kind Kind, double Value, string? Given, double Share, bool CheckedOnly)
 {
     /// <summary>True for a default nobody gave.</summary>
     public bool Assumed => Given is null;
@@ -28,6 +29,9 @@ public sealed record HandInput(Kind Kind, double Value, string? Given, double Sh
 /// <param name="Unused">Names of known values that had no part in it, as typed.</param>
 public sealed record ByHand(Definition Definition, Computation Computation, IReadOnlyList<HandInput> Inputs, IReadOnlyList<string> Unused)
 {
+    /// <summary>Results of other definitions computed on the way, unrounded, in their canonical units; empty when withheld.</summary>
+    public IReadOnlyList<(Kind Kind, double Value)> Intermediates { get; init; } = [];
+
     /// <summary>Computes a definition from values given by name.</summary>
     /// <exception cref="UnusableRequestException">The request itself is wrong; a value merely out of range is withheld instead.</exception>
     public static ByHand Compute(Definition definition, IEnumerable<Given> given, Catalogue? catalogue = null)
@@ -39,12 +43,16 @@ public sealed record ByHand(Definition Definition, Computation Computation, IRea
         roots = WithDefaults(definition, roots);
 
         var computation = Computation.Of(definition, roots);
-        var used = Used(definition, roots, computation);
+        var chain = Needed(definition, roots, computation);
+        var used = chain.Concat(definition.Watched).Concat(definition.Gates.SelectMany(gate => gate.ReadsByHand)).ToHashSet();
         var shares = computation.Shares.Where(share => share.Transducer is null).ToDictionary(share => share.Kind, share => share.Fraction);
         return new ByHand(definition, computation,
             [.. roots.All.Where(root => used.Contains(root.Kind)).Select(root =>
-                new HandInput(root.Kind, root.Value, root.Assumed ? null : named[root.Kind].Given.Typed, shares.GetValueOrDefault(root.Kind)))],
-            [.. named.Values.Where(entry => !used.Contains(entry.Root.Kind)).Select(entry => entry.Given.Name)]);
+                new HandInput(root.Kind, root.Value, root.Assumed ? null : named[root.Kind].Given.Typed, shares.GetValueOrDefault(root.Kind), !chain.Contains(root.Kind)))],
+            [.. named.Values.Where(entry => !used.Contains(entry.Root.Kind)).Select(entry => entry.Given.Name)])
+        {
+            Intermediates = computation.Withheld is null ? [.. chain.Where(kind => kind.Formula is not null && !roots.Has(kind)).Select(kind => (kind, roots[kind]))] : [],
+        };
     }
 
     private static Dictionary<Kind, (Given Given, Root Root)> Read(IEnumerable<Given> given, Vocabulary vocabulary)
@@ -106,11 +114,8 @@ public sealed record ByHand(Definition Definition, Computation Computation, IRea
         Chain.Slots(definition).SelectMany(slot => slot.Kinds).Distinct().Where(kind => kind.Assumed is not null && !roots.Has(kind))
             .Select(kind => new Root(kind, kind.Assumed!.Value, Assumed: true))));
 
-    /// <summary>Kinds that had a part: in the chain when there is a value, anything usable when there is none, and whatever gates look at.</summary>
-    private static HashSet<Kind> Used(Definition definition, Roots roots, Computation computation)
-    {
-        var path = definition.Path(roots);
-        var slots = computation.Missing.Count == 0 ? Chain.Steps(path, roots).Select(step => step.Kind) : Chain.Slots(definition).SelectMany(slot => slot.Kinds);
-        return [.. slots, .. definition.Watched, .. definition.Gates.SelectMany(gate => gate.ReadsByHand)];
-    }
+    /// <summary>Kinds the formula rests on: the chain when it is complete, anything it could use when it is not.</summary>
+    private static HashSet<Kind> Needed(Definition definition, Roots roots, Computation computation) => computation.Missing.Count == 0
+        ? [.. Chain.Steps(definition.Path(roots), roots).Select(step => step.Kind)]
+        : [.. Chain.Slots(definition).SelectMany(slot => slot.Kinds)];
 }

@@ -1,0 +1,15 @@
+using System.CommandLine;
+
+namespace RespDerive.Tests;
+
+/// <summary>The command line, run in this process with captured streams.</summary>
+internal static class Cli
+{
+    public static async Task<(int Code, string Output, string Error)> RunAsync(params string[] args)
+    {
+        using var output = new StringWriter();
+        using var error = new StringWriter();
+        var code = await Program.RunAsync(args, new InvocationConfiguration { Output = output, Error = error });
+        return (code, output.ToString(), error.ToString());
+    }
+}
