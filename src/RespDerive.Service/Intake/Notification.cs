@@ -1,0 +1,73 @@
+using System.Text.Json;
+
+namespace RespDerive.Service.Intake;
+
+/// <summary>What a notification says: resources it brings, and references it only names.</summary>
+/// <param name="Brought">Resources with content.</param>
+/// <param name="Named">Relative references to be read.</param>
+internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyList<string> Named)
+{
+    private const int Deepest = 64;
+
+    /// <summary>A resource, or a Bundle of resources and of a topic-based notification's focus references. Null when it is no JSON object with a resourceType.</summary>
+    public static Notification? Read(byte[] body)
+    {
+        try
+        {
+            using var json = JsonDocument.Parse(body, new JsonDocumentOptions { MaxDepth = Deepest });
+            return json.RootElement is { ValueKind: JsonValueKind.Object } root && Text(root, "resourceType") is { } type
+                ? type == "Bundle" ? OfBundle(root) : new Notification([new Brought(body, null)], [])
+                : null;
+        }
+        catch (JsonException)
+        {
+            return null;
+        }
+    }
+
+    private static Notification OfBundle(JsonElement bundle)
+    {
+        var brought = new List<Brought>();
+        var named = new List<string>();
+        foreach (var entry in Items(bundle, "entry"))
+        {
+            if (!entry.TryGetProperty("resource", out var resource) || resource.ValueKind != JsonValueKind.Object)
+            {
+                continue;
+            }
+
+            if (Text(resource, "resourceType") is "Parameters" or "SubscriptionStatus")
+            {
+                named.AddRange(Focus(resource));
+            }
+            else
+            {
+                brought.Add(new Brought(JsonSerializer.SerializeToUtf8Bytes(resource), Text(entry, "fullUrl")));
+            }
+        }
+
+        return new Notification(brought, [.. named.Distinct(StringComparer.Ordinal)]);
+    }
+
+    /// <summary>References called focus, wherever the status resource keeps them; the last two path segments make them relative.</summary>
+    private static IEnumerable<string> Focus(JsonElement status)
+    {
+        var events = Items(status, "parameter").Where(parameter => Text(parameter, "name") == "notification-event").SelectMany(parameter => Items(parameter, "part"))
+            .Where(part => Text(part, "name") == "focus").Select(part => part.TryGetProperty("valueReference", out var value) ? value : default)
+            .Concat(Items(status, "notificationEvent").Select(one => one.TryGetProperty("focus", out var focus) ? focus : default));
+        foreach (var reference in events.Select(focus => Text(focus, "reference")).OfType<string>())
+        {
+            var parts = reference.Split("/_history/")[0].Split('/', StringSplitOptions.RemoveEmptyEntries);
+            if (parts.Length >= 2)
+            {
+                yield return $"{parts[^2]}/{parts[^1]}";
+            }
+        }
+    }
+
+    private static IEnumerable<JsonElement> Items(JsonElement json, string name) =>
+        json.ValueKind == JsonValueKind.Object && json.TryGetProperty(name, out var items) && items.ValueKind == JsonValueKind.Array ? items.EnumerateArray() : [];
+
+    private static string? Text(JsonElement json, string name) =>
+        json.ValueKind == JsonValueKind.Object && json.TryGetProperty(name, out var text) && text.ValueKind == JsonValueKind.String ? text.GetString() : null;
+}

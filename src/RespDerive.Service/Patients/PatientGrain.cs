@@ -1,0 +1,34 @@
+using Microsoft.Extensions.Logging;
+using Orleans;
+using Orleans.Concurrency;
+using RespDerive.Service.Operations;
+
+namespace RespDerive.Service.Patients;
+
+/// <summary>A patient's worker; its key is the store's number of the patient.</summary>
+internal interface IPatientGrain : IGrainWithIntegerKey
+{
+    /// <summary>Something was journalled. Losing or doubling this is harmless: what is open is swept.</summary>
+    [OneWay]
+    Task Wake();
+}
+
+/// <summary>Takes a patient's turns, one at a time. A queue and nothing more: the turn number in the store is the lock.</summary>
+internal sealed class PatientGrain(PatientTurn turn, ILogger<PatientGrain> logger) : Grain, IPatientGrain
+{
+    /// <inheritdoc/>
+    public async Task Wake()
+    {
+        var patient = this.GetPrimaryKeyLong();
+        try
+        {
+            while (await turn.TakeAsync(patient))
+            {
+            }
+        }
+        catch (Exception exception)
+        {
+            Trouble.Report(logger, exception, $"A turn of patient {patient} failed and will be swept up");
+        }
+    }
+}

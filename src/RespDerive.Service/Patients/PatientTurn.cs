@@ -1,0 +1,70 @@
+using RespDerive.Fhir;
+using RespDerive.Service.Intake;
+using RespDerive.Service.Operations;
+using RespDerive.Storage;
+using RespDerive.Timeline;
+
+namespace RespDerive.Service.Patients;
+
+/// <summary>One turn of a patient: read what is open, work out what changes, commit all of it.</summary>
+internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Feed feed, Awaited awaited)
+{
+    /// <summary>Takes one turn. True when more may be open.</summary>
+    public async Task<bool> TakeAsync(long patient)
+    {
+        var input = store.OpenTurn(patient);
+        if (input is null || input.UpTo == 0)
+        {
+            return false;
+        }
+
+        var now = time.GetUtcNow();
+        var (changes, unresolved) = Work(patient, input);
+        if (unresolved.Count > 0)
+        {
+            await store.AddFetchesAsync(input.Source, unresolved, now);
+            awaited.Hurry();
+        }
+
+        // A turn number that is taken means another activation was faster; what it left open is read again.
+        if (!await store.CommitTurnAsync(patient, input.Turn, input.UpTo, changes, now))
+        {
+            return true;
+        }
+
+        feed.Turned(changes);
+        return input.More || store.OpenTurn(patient, 1) is { UpTo: > 0 };
+    }
+
+    private (TurnChanges Changes, IReadOnlyList<string> Unresolved) Work(long patient, TurnInput input)
+    {
+        using var history = store.History(patient);
+        var set = new StoredResourceSet(history, input.Source);
+        var replacements = input.Left.Select(key => new Replacement(key, [])).ToList();
+        var unresolved = new HashSet<string>(StringComparer.Ordinal);
+        Person? person = null;
+        foreach (var resource in input.Resources)
+        {
+            if (resource.Gone || StoredResourceSet.FactsOf(resource) is not { } facts)
+            {
+                replacements.Add(new Replacement(resource.Key, []));
+                continue;
+            }
+
+            var read = site.Rules.Read(facts, set);
+            person = read.Person ?? person;
+            var missing = read.Unresolved.Where(reference => !set.IsGone(reference) && awaited.CanBeFetched(reference)).ToArray();
+            unresolved.UnionWith(missing);
+
+            // What decides the meaning of a reading is waited for: a specimen its site and time, a metric whether it is set or measured.
+            replacements.Add(new Replacement(resource.Key, missing.Any(Awaited.Decides) ? [] : read.Readings));
+        }
+
+        if (person is null && history.Person is null && history.Find(input.Source, input.Patient) is null && awaited.CanBeFetched(input.Patient))
+        {
+            unresolved.Add(input.Patient);
+        }
+
+        return (Turn.Run(site.Evaluator, history, replacements, person), [.. unresolved]);
+    }
+}
