@@ -82,6 +82,17 @@ public sealed class FlagTests
         Assert.Equal(Withheld.NotArterial, computed.Withheld);
     }
 
+    [Fact]
+    public void A_value_out_of_range_neither_trips_a_gate_nor_keeps_one_silent()
+    {
+        // The fraction is nonsense, yet the sample is venous: the sample comes first.
+        Assert.Equal(Withheld.NotArterial, Of("pf-ratio", ("PaO2", 42, "mm[Hg]"), ("FiO2", 40, "1"), ("sample", "venous")).Withheld);
+
+        // Taken at its word, an age of −3 would be that of a child.
+        Assert.Equal(Withheld.InputInvalid, Of("predicted-body-weight", ("sex", "male"), ("height", 170, "cm"), ("age", -3, "a")).Withheld);
+        Assert.Equal(Withheld.HeightOutOfRange, Of("predicted-body-weight", ("sex", "male"), ("height", 110, "cm")).Withheld);
+    }
+
     private static bool Flagged(string key, string flag, params Given[] given)
     {
         var computed = Of(key, given);

@@ -37,15 +37,11 @@ public sealed record Computation
         var formula = definition.Result.Formula!;
         var path = definition.Path(roots);
         FindMissing(path, roots, reasons, missing);
-        var nonsense = roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode).ToArray();
-        reasons.AddRange(nonsense);
+        reasons.AddRange(roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode));
 
         // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
-        if (nonsense.Length == 0)
-        {
-            reasons.AddRange(definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code));
-        }
-
+        var sane = reasons.Count == 0 ? roots : new Roots(roots.All.Where(root => !IsNonsense(root)));
+        reasons.AddRange(definition.Gates.Where(gate => gate.Trips(sane)).Select(gate => gate.Code));
         if (reasons.Count > 0)
         {
             return new Computation { Withheld = reasons.MinBy(Physiology.Withheld.Rank), Missing = missing };
