@@ -71,8 +71,9 @@ public sealed record Computation
         };
     }
 
-    private static bool IsNonsense(Root root) =>
-        !root.Kind.IsCoded && (!double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest);
+    private static bool IsNonsense(Root root) => root.Kind.IsCoded
+        ? !double.IsInteger(root.Value) || root.Value < 0 || root.Value >= root.Kind.Codes.Count
+        : !double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest;
 
     private static bool IsImpossible(Kind kind, double value) => !double.IsFinite(value) || value < kind.Least || value > kind.Greatest;
 
