@@ -39,7 +39,7 @@ public sealed class PropertyTests
     {
         if (kind.IsCoded)
         {
-            return (int)(draw.At * kind.Codes.Count * 0.999);
+            return draw.Sort == 0 ? double.NaN : draw.Sort == 1 ? kind.Codes.Count : Math.Floor(draw.At * kind.Codes.Count * 0.999);
         }
 
         var greatest = Math.Min(kind.Greatest, 1e6);

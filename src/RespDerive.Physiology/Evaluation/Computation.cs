@@ -37,15 +37,10 @@ public sealed record Computation
         var formula = definition.Result.Formula!;
         var path = definition.Path(roots);
         FindMissing(path, roots, reasons, missing);
-        var nonsense = roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode).ToArray();
-        reasons.AddRange(nonsense);
+        reasons.AddRange(roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode));
 
         // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
-        if (nonsense.Length == 0)
-        {
-            reasons.AddRange(Tripped(definition, roots));
-        }
-
+        reasons.AddRange(Tripped(definition, reasons.Count == 0 ? roots : new Roots(roots.All.Where(root => !IsNonsense(root)))));
         if (reasons.Count > 0)
         {
             return new Computation { Withheld = reasons.MinBy(Physiology.Withheld.Rank), Missing = missing };
@@ -79,8 +74,9 @@ public sealed record Computation
     public static IEnumerable<string> Tripped(Definition definition, Roots roots) =>
         definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code);
 
-    private static bool IsNonsense(Root root) =>
-        !root.Kind.IsCoded && (!double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest);
+    private static bool IsNonsense(Root root) => root.Kind.IsCoded
+        ? !double.IsInteger(root.Value) || root.Value < 0 || root.Value >= root.Kind.Codes.Count
+        : !double.IsFinite(root.Value) || root.Value < root.Kind.Least || root.Value > root.Kind.Greatest;
 
     private static bool IsImpossible(Kind kind, double value) => !double.IsFinite(value) || value < kind.Least || value > kind.Greatest;
 
