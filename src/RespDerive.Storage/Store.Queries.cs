@@ -8,9 +8,8 @@ public sealed partial class Store
     public IReadOnlyList<Delivery> Outcomes(OutcomeFilter filter)
     {
         ArgumentNullException.ThrowIfNull(filter);
-        return _readers.Read(session => session.All(Sql.ListOutcomes, ReadDelivery, filter.Patient, filter.Definition, filter.Code,
-            filter.Withheld is { } withheld ? withheld ? 1 : 0 : null, filter.From?.UtcTicks, filter.To?.UtcTicks, filter.Limit,
-            Withheld.WithdrawnByPerson));
+        return _readers.Read(session => session.All(Sql.ListOutcomes(filter), ReadDelivery, filter.Patient, filter.Definition, filter.Code,
+            Withheld.WithdrawnByPerson, filter.From?.UtcTicks, filter.To?.UtcTicks, filter.Limit));
     }
 
     /// <summary>Totals.</summary>
