@@ -163,6 +163,15 @@ internal static class Sql
         filter.To is null ? "" : " AND at <= $6",
         " ORDER BY at DESC, identity LIMIT $7");
 
+    /// <summary>Codes along the timelines, without bodies; $1 patient, $2 definition, $3 from, $4 to.</summary>
+    public static string Course(OutcomeFilter filter) => string.Concat(
+        "SELECT patient, definition, at, withheld FROM outcome WHERE state > 0",
+        filter.Patient is null ? "" : " AND patient = $1",
+        filter.Definition is null ? "" : " AND definition = $2",
+        filter.From is null ? "" : " AND at >= $3",
+        filter.To is null ? "" : " AND at <= $4",
+        " ORDER BY patient, definition, at, identity");
+
     public const string MarkDelivered =
         """
         UPDATE outcome SET delivered = $2, revisions = revisions + 1, server_id = $3, server_version = $4,

@@ -31,8 +31,8 @@ public sealed partial class Store
         };
     });
 
-    /// <summary>The patient's timeline and outcomes in one snapshot; dispose it soon.</summary>
-    public PatientHistory History(long patient) => new(_readers, _records, patient);
+    /// <summary>The patient's timeline and outcomes in one snapshot; dispose it soon, and hold one at a time: there are few.</summary>
+    public PatientHistory History(long patient) => new(_histories, _records, patient);
 
     /// <summary>Patients with something to read, the longest waiting first.</summary>
     public IReadOnlyList<long> PatientsWithOpenRows(int limit) => _readers.Read(session => session.All(Sql.OpenPatients, row => row.GetInt64(0), limit));

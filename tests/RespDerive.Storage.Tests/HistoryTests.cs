@@ -84,6 +84,18 @@ public sealed class HistoryTests
     }
 
     [Fact]
+    public async Task Reading_goes_on_while_all_histories_are_held()
+    {
+        await using var temporary = new TemporaryStore();
+        var patient = await temporary.PatientAsync();
+        var held = Enumerable.Range(0, 8).Select(_ => temporary.Store.History(patient)).ToList();
+
+        Assert.NotNull(temporary.Store.Find("ehr", "Patient/a"));
+        Assert.True(await temporary.CommitAsync(patient, new TurnChanges()));
+        held.ForEach(history => history.Dispose());
+    }
+
+    [Fact]
     public async Task Histories_of_more_callers_than_connections_wait_for_each_other()
     {
         await using var temporary = new TemporaryStore();

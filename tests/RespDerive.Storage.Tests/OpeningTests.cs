@@ -36,11 +36,25 @@ public sealed class OpeningTests : IDisposable
     }
 
     [Fact]
-    public void A_store_in_memory_is_refused()
+    public async Task Files_of_the_store_are_for_their_owner_only()
     {
-        var refusal = Assert.Throws<StoreException>(() => Store.Open(":memory:", Some.Kind));
+        Assert.SkipWhen(OperatingSystem.IsWindows(), "no file modes");
+        await using var store = Store.Open(File, Some.Kind);
+        await store.AppendAsync([Some.Arrival("Observation/1")]);
 
-        Assert.Equal("store-not-durable", refusal.Code);
+        Assert.Equal(3, Directory.GetFiles(_folder).Length);
+#pragma warning disable CA1416 // skipped there
+        Assert.All(Directory.GetFiles(_folder), file => Assert.Equal(UnixFileMode.UserRead | UnixFileMode.UserWrite, System.IO.File.GetUnixFileMode(file)));
+#pragma warning restore CA1416
+    }
+
+    [Fact]
+    public async Task A_store_is_always_a_file()
+    {
+        var path = Path.Combine(_folder, ":memory:");
+        await using var store = Store.Open(path, Some.Kind);
+
+        Assert.True(System.IO.File.Exists(path));
     }
 
     [Fact]

@@ -27,6 +27,22 @@ public sealed class QueryTests
     }
 
     [Fact]
+    public async Task Withheld_outcomes_in_a_row_are_one_interval()
+    {
+        await using var temporary = new TemporaryStore();
+        var patient = await temporary.PatientAsync();
+        string?[] codes = ["missing-input", "missing-input", "not-equilibrated", null, "missing-input", "missing-input", "missing-input"];
+        await temporary.CommitOutcomesAsync(patient, 0, [.. codes.Select((code, n) => Some.Outcome($"{n}", Some.At(n), code is null ? 1 : null, code))]);
+        await temporary.CommitOutcomesAsync(patient, 0, Some.Outcome("other", Some.At(7), null, "missing-input", "aa-gradient"));
+
+        WithheldRun Run(string code, int from, int to, int count, string definition = "pf-ratio") => new(patient, definition, code, Some.At(from), Some.At(to), count);
+        Assert.Equal([Run("missing-input", 7, 7, 1, "aa-gradient"), Run("missing-input", 4, 6, 3), Run("not-equilibrated", 2, 2, 1), Run("missing-input", 0, 1, 2)],
+            temporary.Store.WithheldRuns(new OutcomeFilter()));
+        Assert.Equal([Run("missing-input", 4, 5, 2)],
+            temporary.Store.WithheldRuns(new OutcomeFilter { Patient = patient, Definition = "pf-ratio", Code = "missing-input", From = Some.At(3), To = Some.At(5) }));
+    }
+
+    [Fact]
     public async Task Counts_follow_what_happened()
     {
         await using var temporary = new TemporaryStore();

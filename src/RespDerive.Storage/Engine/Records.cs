@@ -33,7 +33,10 @@ internal sealed class Records(Func<string, Kind?> kinds)
     }
 }
 
-/// <summary>Generated serialisers. Every property with a default is always written, since a missing one would be read as null.</summary>
+/// <summary>
+/// Generated serialisers. Only nulls are left out: a property missing in a row is read as null or zero, not as its initial
+/// value, so a new one needs a schema script that fills it into the rows (a test holds the list).
+/// </summary>
 [JsonSourceGenerationOptions(
     DefaultIgnoreCondition = JsonIgnoreCondition.WhenWritingNull,
     IgnoreReadOnlyProperties = true,
