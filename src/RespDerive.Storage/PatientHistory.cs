@@ -17,7 +17,15 @@ public sealed class PatientHistory : IPatientHistory, IDisposable
     {
         (_readers, _records, _patient) = (readers, records, patient);
         _session = readers.Take();
-        Person = Open.One(Sql.Person, row => _records.Person(row.GetFieldValue<byte[]>(0)), patient);
+        try
+        {
+            Person = Open.One(Sql.Person, row => _records.Person(row.GetFieldValue<byte[]>(0)), patient);
+        }
+        catch
+        {
+            Dispose();
+            throw;
+        }
     }
 
     /// <inheritdoc/>

@@ -112,24 +112,22 @@ internal static class Sql
 
     // outcomes
     public const string OutcomesBetween =
-        "SELECT body FROM outcome WHERE patient = $1 AND definition = $2 AND at >= $3 AND at <= $4 AND body IS NOT NULL ORDER BY at, identity";
+        "SELECT body FROM outcome WHERE patient = $1 AND definition = $2 AND at >= $3 AND at <= $4 AND state > 0 ORDER BY at, identity";
 
-    public const string HasValue = "SELECT CASE WHEN body IS NOT NULL AND withheld IS NULL THEN 1 ELSE 0 END FROM outcome WHERE identity = $1";
+    public const string OutcomeState = "SELECT state FROM outcome WHERE identity = $1";
 
-    // $3 now; $8 the new body has a value. Nothing more is wanted of what a person has withdrawn.
+    // $3 now. Nothing more is wanted of what a person has withdrawn.
     public const string SetOutcome =
         """
-        INSERT INTO outcome (identity, patient, definition, at, withheld, body, wanted, since, due) VALUES ($1, $2, $4, $5, $6, $7, 1, $3, $3)
+        INSERT INTO outcome (identity, patient, definition, at, state, withheld, body, wanted, since, due) VALUES ($1, $2, $4, $5, $6, $7, $8, 1, $3, $3)
         ON CONFLICT (identity) DO UPDATE SET
-            definition = excluded.definition, at = excluded.at, withheld = excluded.withheld, body = excluded.body,
-            valued = CASE WHEN $8 = 1 THEN NULL WHEN outcome.body IS NOT NULL AND outcome.withheld IS NULL THEN outcome.body ELSE outcome.valued END,
+            definition = excluded.definition, at = excluded.at, state = excluded.state, withheld = excluded.withheld, body = excluded.body,
+            valued = CASE WHEN excluded.state = 1 THEN NULL WHEN outcome.state = 1 THEN outcome.body ELSE outcome.valued END,
         """ + Want + " WHERE outcome.patient = excluded.patient";
 
     public const string ClearOutcome =
-        """
-        UPDATE outcome SET withheld = NULL, body = NULL,
-            valued = CASE WHEN body IS NOT NULL AND withheld IS NULL THEN body ELSE valued END,
-        """ + Want + " WHERE identity = $1 AND patient = $2";
+        "UPDATE outcome SET state = 0, withheld = NULL, body = NULL, valued = CASE WHEN state = 1 THEN body ELSE valued END," + Want +
+        " WHERE identity = $1 AND patient = $2";
 
     // an edition that already waits keeps its place and its back-off
     private const string Want =
@@ -142,7 +140,7 @@ internal static class Sql
     // outbox
     private const string DeliveryColumns =
         """
-        SELECT identity, patient, body, valued, withheld, wanted, delivered, revisions, final_seen, server_id, server_version,
+        SELECT identity, patient, body, valued, wanted, delivered, revisions, final_seen, server_id, server_version,
                tries, due, since, parked, parked_text, withdrawn
         FROM outcome
         """;
@@ -153,14 +151,26 @@ internal static class Sql
     public const string ParkedDeliveries = DeliveryColumns + " WHERE parked IS NOT NULL ORDER BY since, identity LIMIT $1";
     public const string FindDelivery = DeliveryColumns + " WHERE identity = $1";
 
-    public const string ListOutcomes = DeliveryColumns +
-        """
-         WHERE body IS NOT NULL AND ($1 IS NULL OR patient = $1) AND ($2 IS NULL OR definition = $2)
-            AND ($3 IS NULL OR withheld = $3 OR (withdrawn = 1 AND $3 = $8))
-            AND ($4 IS NULL OR (withheld IS NOT NULL OR withdrawn = 1) = $4)
-            AND ($5 IS NULL OR at >= $5) AND ($6 IS NULL OR at <= $6)
-        ORDER BY at DESC, identity LIMIT $7
-        """;
+    /// <summary>Conditions only for what is asked, so that an index serves it. Parameters: patient, definition, code, withdrawn-by-person, from, to, limit.</summary>
+    public static string ListOutcomes(OutcomeFilter filter) => string.Concat(
+        DeliveryColumns,
+        " WHERE state > 0",
+        filter.Patient is null ? "" : " AND patient = $1",
+        filter.Definition is null ? "" : " AND definition = $2",
+        filter.Code is null ? "" : " AND (CASE WHEN withdrawn = 1 THEN $4 ELSE withheld END) = $3",
+        filter.Withheld is { } withheld ? withheld ? " AND (state = 2 OR withdrawn = 1)" : " AND state = 1 AND withdrawn = 0" : "",
+        filter.From is null ? "" : " AND at >= $5",
+        filter.To is null ? "" : " AND at <= $6",
+        " ORDER BY at DESC, identity LIMIT $7");
+
+    /// <summary>Codes along the timelines, without bodies; $1 patient, $2 definition, $3 from, $4 to.</summary>
+    public static string Course(OutcomeFilter filter) => string.Concat(
+        "SELECT patient, definition, at, withheld FROM outcome WHERE state > 0",
+        filter.Patient is null ? "" : " AND patient = $1",
+        filter.Definition is null ? "" : " AND definition = $2",
+        filter.From is null ? "" : " AND at >= $3",
+        filter.To is null ? "" : " AND at <= $4",
+        " ORDER BY patient, definition, at, identity");
 
     public const string MarkDelivered =
         """
@@ -218,8 +228,8 @@ internal static class Sql
     public const string AddTally = "INSERT INTO tally (name, n) VALUES ($1, $2) ON CONFLICT (name) DO UPDATE SET n = tally.n + excluded.n";
     public const string Tally = "SELECT n FROM tally WHERE name = $1";
     public const string CountReadings = "SELECT count(*) FROM reading";
-    public const string CountResults = "SELECT count(*) FROM outcome WHERE body IS NOT NULL AND withheld IS NULL AND withdrawn = 0";
-    public const string CountWithheld = "SELECT count(*) FROM outcome WHERE body IS NOT NULL AND (withheld IS NOT NULL OR withdrawn = 1)";
+    public const string CountResults = "SELECT count(*) FROM outcome WHERE state = 1 AND withdrawn = 0";
+    public const string CountWithheld = "SELECT count(*) FROM outcome WHERE state = 2 OR (state = 1 AND withdrawn = 1)";
     public const string CountParked = "SELECT count(*) FROM outcome WHERE parked IS NOT NULL";
     public const string CountPending = "SELECT count(*) FROM outcome WHERE wanted <> delivered AND parked IS NULL";
 }

@@ -8,9 +8,31 @@ public sealed partial class Store
     public IReadOnlyList<Delivery> Outcomes(OutcomeFilter filter)
     {
         ArgumentNullException.ThrowIfNull(filter);
-        return _readers.Read(session => session.All(Sql.ListOutcomes, ReadDelivery, filter.Patient, filter.Definition, filter.Code,
-            filter.Withheld is { } withheld ? withheld ? 1 : 0 : null, filter.From?.UtcTicks, filter.To?.UtcTicks, filter.Limit,
-            Withheld.WithdrawnByPerson));
+        return _readers.Read(session => session.All(Sql.ListOutcomes(filter), ReadDelivery, filter.Patient, filter.Definition, filter.Code,
+            Withheld.WithdrawnByPerson, filter.From?.UtcTicks, filter.To?.UtcTicks, filter.Limit));
+    }
+
+    /// <summary>Withheld outcomes in a row with the same code, as intervals; a value or another code between ends one. The latest first.</summary>
+    public IReadOnlyList<WithheldRun> WithheldRuns(OutcomeFilter filter)
+    {
+        ArgumentNullException.ThrowIfNull(filter);
+        var course = _readers.Read(session => session.All(Sql.Course(filter),
+            row => new WithheldRun(row.GetInt64(0), row.GetString(1), Columns.OptionalText(row, 3) ?? "", Columns.Time(row.GetInt64(2)), Columns.Time(row.GetInt64(2)), 1),
+            filter.Patient, filter.Definition, filter.From?.UtcTicks, filter.To?.UtcTicks));
+        var runs = new List<WithheldRun>();
+        foreach (var next in course)
+        {
+            if (runs.Count > 0 && runs[^1] is var last && (last.Patient, last.Definition, last.Code) == (next.Patient, next.Definition, next.Code))
+            {
+                runs[^1] = last with { To = next.To, Count = last.Count + 1 };
+            }
+            else
+            {
+                runs.Add(next);
+            }
+        }
+
+        return [.. runs.Where(run => run.Code.Length > 0 && (filter.Code ?? run.Code) == run.Code).OrderByDescending(run => run.To).Take(filter.Limit)];
     }
 
     /// <summary>Totals.</summary>

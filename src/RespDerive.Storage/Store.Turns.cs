@@ -4,6 +4,9 @@ namespace RespDerive.Storage;
 
 public sealed partial class Store
 {
+    private const long ValuedState = 1;
+    private const long WithheldState = 2;
+
     /// <summary>What a patient's next turn has to read; without resources when nothing is open. Null when there is no such patient.</summary>
     /// <param name="patient">Number of the patient.</param>
     /// <param name="limit">At most this many resources; the rest stays open.</param>
@@ -28,8 +31,8 @@ public sealed partial class Store
         };
     });
 
-    /// <summary>The patient's timeline and outcomes in one snapshot; dispose it soon.</summary>
-    public PatientHistory History(long patient) => new(_readers, _records, patient);
+    /// <summary>The patient's timeline and outcomes in one snapshot; dispose it soon, and hold one at a time: there are few.</summary>
+    public PatientHistory History(long patient) => new(_histories, _records, patient);
 
     /// <summary>Patients with something to read, the longest waiting first.</summary>
     public IReadOnlyList<long> PatientsWithOpenRows(int limit) => _readers.Read(session => session.All(Sql.OpenPatients, row => row.GetInt64(0), limit));
@@ -39,58 +42,70 @@ public sealed partial class Store
     public Task<bool> CommitTurnAsync(long patient, long turn, long upTo, TurnChanges changes, DateTimeOffset now)
     {
         ArgumentNullException.ThrowIfNull(changes);
-        return _writer.RunAsync(session =>
+        var replaced = changes.Replaced.ToHashSet();
+        if (changes.Readings.Any(reading => !replaced.Contains(reading.Id.Resource)))
         {
-            if (session.Execute(Sql.AddTurn, patient, turn, now.UtcTicks) == 0)
-            {
-                return false;
-            }
+            throw new ArgumentException("a reading belongs to a resource that is not replaced", nameof(changes));
+        }
 
-            ReplaceReadings(session, patient, changes);
-            if (changes.Person is { } person)
+        // the writer only writes: what it will write is made here
+        var readings = changes.Readings.Select(reading => (reading, _records.Bytes(reading))).ToList();
+        var outcomes = changes.Outcomes.Select(change => (change, change.Now is { } outcome ? _records.Bytes(outcome) : null)).ToList();
+        var bytes = readings.Sum(row => (long)row.Item2.Length) + outcomes.Sum(row => row.Item2?.Length ?? 0L);
+        return _writer.RunAsync(
+            session =>
             {
-                session.Execute(Sql.SetPerson, patient, _records.Bytes(person));
-            }
+                if (session.Execute(Sql.AddTurn, patient, turn, now.UtcTicks) == 0)
+                {
+                    return false;
+                }
 
-            foreach (var change in changes.Outcomes)
-            {
-                SetOutcome(session, patient, change, now);
-            }
+                ReplaceReadings(session, patient, replaced, readings);
+                if (changes.Person is { } person)
+                {
+                    session.Execute(Sql.SetPerson, patient, _records.Bytes(person));
+                }
 
-            session.Execute(Sql.CloseUpTo, patient, upTo);
-            return true;
-        });
+                foreach (var (change, body) in outcomes)
+                {
+                    SetOutcome(session, patient, change, body, now);
+                }
+
+                session.Execute(Sql.CloseUpTo, patient, upTo);
+                return true;
+            },
+            bytes);
     }
 
-    private void ReplaceReadings(Session session, long patient, TurnChanges changes)
+    private static void ReplaceReadings(Session session, long patient, HashSet<ResourceKey> replaced, List<(Reading Reading, byte[] Body)> readings)
     {
-        var resources = changes.Replaced.Distinct().ToDictionary(key => key, key => Resource(session, key));
+        var resources = replaced.ToDictionary(key => key, key => Resource(session, key));
         foreach (var resource in resources.Values)
         {
             session.Execute(Sql.ClearReadings, patient, resource);
         }
 
-        foreach (var reading in changes.Readings)
+        foreach (var (reading, body) in readings)
         {
-            session.Execute(Sql.AddReading, patient, reading.Kind.Key, reading.At.UtcTicks, resources[reading.Id.Resource], _records.Bytes(reading));
+            session.Execute(Sql.AddReading, patient, reading.Kind.Key, reading.At.UtcTicks, resources[reading.Id.Resource], body);
         }
     }
 
-    private void SetOutcome(Session session, long patient, OutcomeChange change, DateTimeOffset now)
+    private static void SetOutcome(Session session, long patient, OutcomeChange change, byte[]? body, DateTimeOffset now)
     {
         var identity = Columns.Identity(change.Identity);
-        var had = session.Number(Sql.HasValue, identity);
+        var before = session.Number(Sql.OutcomeState, identity);
         var has = change.Now is { Withheld: null };
         var changed = change.Now is { } outcome
             ? session.Execute(Sql.SetOutcome, identity, patient, now.UtcTicks,
-                outcome.Definition, outcome.At.UtcTicks, outcome.Withheld, _records.Bytes(outcome), has ? 1 : 0)
+                outcome.Definition, outcome.At.UtcTicks, has ? ValuedState : WithheldState, outcome.Withheld, body)
             : session.Execute(Sql.ClearOutcome, identity, patient, now.UtcTicks);
-        if (changed == 0 && had is not null)
+        if (changed == 0 && before is not null)
         {
             throw new InvalidOperationException("an outcome of this identity belongs to another patient");
         }
 
-        if (had == 1)
+        if (before == ValuedState)
         {
             Count(session, has ? Tallies.Revisions : Tallies.Retractions);
         }

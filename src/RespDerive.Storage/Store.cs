@@ -12,12 +12,16 @@ public sealed partial class Store : IAsyncDisposable
 {
     private readonly Writer _writer;
     private readonly Readers _readers;
+
+    // of their own: a caller that holds a history may still read, however many hold one
+    private readonly Readers _histories;
     private readonly Records _records;
 
     private Store(Session session, string path, Func<string, Kind?> kinds)
     {
         _writer = new Writer(session);
         _readers = new Readers(path);
+        _histories = new Readers(path);
         _records = new Records(kinds);
     }
 
@@ -28,12 +32,14 @@ public sealed partial class Store : IAsyncDisposable
     public Task<StoreException> WhenFailed => _writer.WhenFailed;
 
     /// <summary>Opens or creates the file and brings it to this software's schema.</summary>
-    /// <param name="path">The file, on a local file system; its folder must exist.</param>
+    /// <param name="path">The file, on a local file system; its folder must exist. A new one is readable by its owner only.</param>
     /// <param name="kinds">Kinds by key: those of <see cref="Kinds"/>, of the catalogue, and <see cref="Events"/>.</param>
     /// <exception cref="StoreException">store-not-durable, store-newer-than-software, store-unusable.</exception>
     public static Store Open(string path, Func<string, Kind?> kinds)
     {
         ArgumentNullException.ThrowIfNull(kinds);
+        path = Path.GetFullPath(path);
+        CreatePrivate(path);
         var session = Session.Open(path, readOnly: false);
         try
         {
@@ -71,10 +77,35 @@ public sealed partial class Store : IAsyncDisposable
     {
         await _writer.DisposeAsync();
         _readers.Dispose();
+        _histories.Dispose();
     }
 
     /// <summary>An action in the next transaction; for tests of the engine.</summary>
     internal Task<T> WriteAsync<T>(Func<Session, T> action) => _writer.RunAsync(action);
+
+    // Patient data is for the service alone; SQLite gives its side files the mode of this one.
+    private static void CreatePrivate(string path)
+    {
+        if (File.Exists(path) || OperatingSystem.IsWindows())
+        {
+            return;
+        }
+
+        try
+        {
+            var options = new FileStreamOptions
+            {
+                Mode = FileMode.CreateNew,
+                Access = FileAccess.Write,
+                UnixCreateMode = UnixFileMode.UserRead | UnixFileMode.UserWrite,
+            };
+            File.Open(path, options).Dispose();
+        }
+        catch (Exception problem) when (problem is IOException or UnauthorizedAccessException)
+        {
+            throw new StoreException(StoreException.Unusable, $"cannot create {path}: {problem.Message}", problem);
+        }
+    }
 
     private static (string Source, string Reference)? Name(Session session, long patient) =>
         session.One<(string, string)?>(Sql.PatientName, row => (row.GetString(0), row.GetString(1)), patient);

@@ -1,4 +1,5 @@
 using System.Collections.Concurrent;
+using Microsoft.Data.Sqlite;
 
 namespace RespDerive.Storage;
 
@@ -9,6 +10,7 @@ internal sealed class Readers(string path) : IDisposable
 
     private readonly ConcurrentBag<Session> _idle = [];
     private readonly SemaphoreSlim _free = new(Most);
+    private volatile bool _closed;
 
     /// <summary>Waits for a connection and starts a snapshot on it.</summary>
     public Session Take()
@@ -30,9 +32,24 @@ internal sealed class Readers(string path) : IDisposable
     /// <summary>Ends the snapshot.</summary>
     public void Return(Session session)
     {
-        session.Execute(Sql.Rollback);
-        _idle.Add(session);
-        _free.Release();
+        try
+        {
+            session.Execute(Sql.Rollback);
+            _idle.Add(session);
+        }
+        catch (SqliteException)
+        {
+            session.Dispose();
+        }
+        finally
+        {
+            _free.Release();
+        }
+
+        if (_closed)
+        {
+            Dispose();
+        }
     }
 
     /// <summary>One read in one snapshot.</summary>
@@ -52,11 +69,10 @@ internal sealed class Readers(string path) : IDisposable
     /// <inheritdoc/>
     public void Dispose()
     {
+        _closed = true;
         while (_idle.TryTake(out var session))
         {
             session.Dispose();
         }
-
-        _free.Dispose();
     }
 }

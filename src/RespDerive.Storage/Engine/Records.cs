@@ -8,7 +8,7 @@ namespace RespDerive.Storage;
 /// <summary>Readings, persons and outcomes as bytes.</summary>
 internal sealed class Records(Func<string, Kind?> kinds)
 {
-    private readonly RecordsJson _json = new(new JsonSerializerOptions(RecordsJson.Default.Options) { Converters = { new KindConverter(kinds) } });
+    private readonly RecordsJson _json = new(Options(kinds));
 
     public bool Knows(string kind) => kinds(kind) is not null;
 
@@ -24,9 +24,19 @@ internal sealed class Records(Func<string, Kind?> kinds)
     public Person Person(byte[] bytes) => JsonSerializer.Deserialize(bytes, _json.Person)!;
 
     public Outcome Outcome(byte[] bytes) => JsonSerializer.Deserialize(bytes, _json.Outcome)!;
+
+    private static JsonSerializerOptions Options(Func<string, Kind?> kinds)
+    {
+        var options = new JsonSerializerOptions(RecordsJson.Default.Options);
+        options.Converters.Insert(0, new KindConverter(kinds));
+        return options;
+    }
 }
 
-/// <summary>Generated serialisers. Every property with a default is always written, since a missing one would be read as null.</summary>
+/// <summary>
+/// Generated serialisers. Only nulls are left out: a property missing in a row is read as null or zero, not as its initial
+/// value, so a new one needs a schema script that fills it into the rows (a test holds the list).
+/// </summary>
 [JsonSourceGenerationOptions(
     DefaultIgnoreCondition = JsonIgnoreCondition.WhenWritingNull,
     IgnoreReadOnlyProperties = true,

@@ -95,7 +95,7 @@ internal sealed class Writer : IAsyncDisposable
             FailAll(batch, new StoreException(StoreException.Busy, "another process holds the store", problem));
             return;
         }
-        catch (SqliteException problem)
+        catch (Exception problem)
         {
             Stop(batch, problem);
             return;
@@ -110,7 +110,7 @@ internal sealed class Writer : IAsyncDisposable
 
             _session.Execute(Sql.Commit);
         }
-        catch (SqliteException problem)
+        catch (Exception problem)
         {
             Stop(batch, problem);
             return;
@@ -126,7 +126,7 @@ internal sealed class Writer : IAsyncDisposable
         {
             work.Run(_session);
         }
-        catch (Exception problem) when (problem is not SqliteException { SqliteErrorCode: not SQLitePCL.raw.SQLITE_CONSTRAINT })
+        catch (Exception problem) when (problem is not SqliteException sqlite || IsOfItem(sqlite.SqliteErrorCode))
         {
             _session.Execute(Sql.RollbackTo);
             work.Problem = problem;
@@ -135,7 +135,11 @@ internal sealed class Writer : IAsyncDisposable
         _session.Execute(Sql.Release);
     }
 
-    private void Stop(List<Work> batch, SqliteException problem)
+    // Everything else says that the file, the disk or the memory is in trouble.
+    private static bool IsOfItem(int code) =>
+        code is SQLitePCL.raw.SQLITE_CONSTRAINT or SQLitePCL.raw.SQLITE_TOOBIG or SQLitePCL.raw.SQLITE_MISMATCH or SQLitePCL.raw.SQLITE_ERROR;
+
+    private void Stop(List<Work> batch, Exception problem)
     {
         var failure = new StoreException(StoreException.Failed, $"a write failed and the store has stopped: {problem.Message}", problem);
         Failure = failure;

@@ -78,13 +78,14 @@ CREATE TABLE reading (
 CREATE INDEX reading_by_time ON reading (patient, kind, at);
 CREATE INDEX reading_by_resource ON reading (patient, resource);
 
--- One row per identity ever computed, with the state of its delivery. body is null once the anchor no longer calls;
--- valued is the last outcome that had a value, while body has none.
+-- One row per identity ever computed, with the state of its delivery. state: 0 the anchor no longer calls, 1 a value,
+-- 2 withheld. valued is the last outcome that had a value, while body has none.
 CREATE TABLE outcome (
     identity   TEXT PRIMARY KEY,
     patient    INTEGER NOT NULL REFERENCES patient (id),
     definition TEXT NOT NULL,
     at         INTEGER NOT NULL,
+    state      INTEGER NOT NULL,
     withheld   TEXT,
     body       BLOB,
     valued     BLOB,
@@ -102,6 +103,8 @@ CREATE TABLE outcome (
     withdrawn  INTEGER NOT NULL DEFAULT 0
 ) STRICT;
 CREATE INDEX outcome_by_time ON outcome (patient, definition, at);
+CREATE INDEX outcome_by_at ON outcome (at);
+CREATE INDEX outcome_by_state ON outcome (state, withdrawn);
 CREATE INDEX outcome_pending ON outcome (due, at) WHERE wanted <> delivered AND parked IS NULL;
 CREATE INDEX outcome_parked ON outcome (since) WHERE parked IS NOT NULL;
 

@@ -57,6 +57,15 @@ public sealed record Delivery
     public bool IsPending => Wanted != Delivered;
 }
 
+/// <summary>Withheld outcomes of one definition in a row with one code.</summary>
+/// <param name="Patient">Number of the patient.</param>
+/// <param name="Definition">Key of the definition.</param>
+/// <param name="Code">Withheld code.</param>
+/// <param name="From">First event time.</param>
+/// <param name="To">Last event time.</param>
+/// <param name="Count">How many.</param>
+public sealed record WithheldRun(long Patient, string Definition, string Code, DateTimeOffset From, DateTimeOffset To, int Count);
+
 /// <summary>Which outcomes to list; null = any.</summary>
 public sealed record OutcomeFilter
 {

@@ -35,12 +35,17 @@ public sealed record Arrival
     /// </summary>
     public IReadOnlyList<string> References { get; init; } = [];
 
-    /// <summary>The order of a withdrawal that was seen when the given version was the newest known.</summary>
-    // 'g' sorts after every hexadecimal digit: later than that version, earlier than any with a later time or number
-    public static VersionOrder GoneAfter(VersionOrder known)
+    /// <summary>The order of a withdrawal seen while the given version was the newest known: after it, before any with a later time or number.</summary>
+    public static VersionOrder GoneAfter(VersionOrder known) => Following(known, "-gone");
+
+    /// <summary>The order of the same version read again after its withdrawal had been journalled; see <see cref="GoneAfter"/>.</summary>
+    public static VersionOrder SeenAfter(VersionOrder gone) => Following(gone, "-seen");
+
+    // a longer text sorts after its own beginning
+    private static VersionOrder Following(VersionOrder known, string what)
     {
         ArgumentNullException.ThrowIfNull(known);
-        return known with { Digest = "gone-" + known.Digest };
+        return known with { Digest = known.Digest + what };
     }
 }
 
