@@ -10,9 +10,6 @@ namespace RespDerive.Fhir.Writing;
 /// <summary>The Observation that carries a result.</summary>
 internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options, Vocabulary words, References references)
 {
-    private const string Caution =
-        "Calculated from charted values; not a diagnosis, an alarm or an order. Check it against the patient and the values it rests on; local policy and licensed clinicians decide.";
-
     public Observation Of(Outcome outcome, Definition definition, Edition edition, ResourceReference device)
     {
         var observation = new Observation
@@ -26,7 +23,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
             Encounter = outcome.Encounter is { } encounter ? references.Context(encounter, outcome.Anchor) : null,
             Effective = new FhirDateTime(Effective(outcome)),
             Issued = edition.Recorded,
-            Method = Method(outcome, definition),
+            Method = Method(outcome, definition, edition),
             Device = options.OmitDevice ? null : device,
             DerivedFrom = [.. Sources(outcome).Select(references.Version)],
         };
@@ -88,15 +85,21 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
         ? outcome.AtText
         : outcome.At.ToString("yyyy-MM-dd'T'HH:mm:ss.FFFFFFFzzz", CultureInfo.InvariantCulture);
 
-    private CodeableConcept Method(Outcome outcome, Definition definition)
+    private CodeableConcept Method(Outcome outcome, Definition definition, Edition edition)
     {
         var revision = outcome.Revision.ToString(CultureInfo.InvariantCulture);
-        var code = outcome.Variant is { } variant ? $"{definition.Key}.{variant}" : definition.Key;
-        var named = outcome.Variant is { } spoken ? $"{definition.Equation}; definition {definition.Key}, revision {revision}, variant {spoken}" : $"{definition.Equation}; definition {definition.Key}, revision {revision}";
-        var method = new CodeableConcept { Coding = [new Coding(words.Method, code, definition.Equation) { Version = revision }], Text = named };
-        if (outcome.Uncertainty is not null)
+        var code = outcome.Variant is null ? definition.Key : $"{definition.Key}.{outcome.Variant}";
+        var variant = outcome.Variant is { } name ? $", variant {name}" : "";
+        var method = new CodeableConcept
         {
-            method.Text += $". Standard uncertainty (k = 1) from {(outcome.SiteTolerance ? "the site's own figures" : "generic limits")} for the inputs, not from this patient.";
+            Coding = [new Coding(words.Method, code, definition.Equation) { Version = revision }],
+            Text = $"{definition.Equation}; definition {definition.Key}, revision {revision}{variant}.",
+        };
+        if (outcome.Uncertainty is not null && !edition.IsRetraction)
+        {
+            method.Text += outcome.SiteTolerance
+                ? " Standard uncertainty (k = 1) from the site's own accuracy figures, generic limits where it gives none."
+                : " Standard uncertainty (k = 1) from generic accuracy limits of devices and analysers.";
             method.AddExtension(words.UncertaintyBasis, new Code(outcome.SiteTolerance ? "site" : "generic"));
         }
 
@@ -127,7 +130,12 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
             yield return new Annotation { Text = new Markdown("Flagged: " + string.Join(' ', outcome.Flags.Select(Flags.Text))) };
         }
 
-        yield return new Annotation { Text = new Markdown($"{Caution} {definition.Caution}") };
+        // The definition's own words first: they are about this number.
+        var no = definition.Caution.Contains("diagnosis", StringComparison.Ordinal) ? "no alarm and no order" : "no diagnosis, no alarm and no order";
+        yield return new Annotation
+        {
+            Text = new Markdown($"{definition.Caution} Arithmetic on charted values, {no}: check it against the patient and the values it rests on. Local policy and licensed clinicians decide."),
+        };
     }
 
     private IEnumerable<Observation.ComponentComponent> Components(Outcome outcome)
@@ -147,7 +155,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
             var name = Name(input.Kind);
             var component = new Observation.ComponentComponent
             {
-                Code = new CodeableConcept(words.InputValue, input.Kind, name, Capital(name) + (input.Assumed ? " (assumed)" : "")),
+                Code = new CodeableConcept(words.InputValue, input.Kind, name, Capital(name) + Aside(input)),
                 Value = input.Code is { } code ? Coded(input.Kind, code) : Numbers.Quantity(Numbers.Shown(input.Value), input.Unit ?? "1"),
             };
             if (input.GapMinutes is { } gap)
@@ -163,6 +171,17 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
             yield return component;
         }
     }
+
+    /// <summary>What a reader of a plain list needs beside the value.</summary>
+    private static string Aside(UsedInput input) => input switch
+    {
+        { Assumed: true } => " (assumed)",
+        { GapMinutes: <= -1 and { } before } => $" ({Minutes(-before)} min before)",
+        { GapMinutes: >= 1 and { } after } => $" ({Minutes(after)} min after)",
+        _ => "",
+    };
+
+    private static string Minutes(double minutes) => Math.Round(minutes).ToString(CultureInfo.InvariantCulture);
 
     private string Name(string kind) => Kinds.Find(kind)?.Name ?? catalogue.Find(kind)?.Result.Name ?? kind;
 
