@@ -1,4 +1,4 @@
-using System.Text;
+using System.Runtime.InteropServices;
 using System.Text.Json;
 
 namespace RespDerive.Fhir;
@@ -29,7 +29,7 @@ internal static class Bundles
             }
 
             yield return resource.ValueKind == JsonValueKind.Object
-                ? new(line, index, Encoding.UTF8.GetBytes(resource.GetRawText()), entry.Text("fullUrl"), links, null)
+                ? new(line, index, JsonMarshal.GetRawUtf8Value(resource).ToArray(), entry.Text("fullUrl"), links, null)
                 : new(line, index, default, entry.Text("fullUrl"), links, Refusals.NotFhir);
         }
     }
