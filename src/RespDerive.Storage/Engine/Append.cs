@@ -14,7 +14,7 @@ internal sealed class Append(Session session, Arrival arrival)
     {
         var (resource, winner, before) = FindOrAddResource();
         var order = arrival.Order;
-        if (session.Number(Sql.FindVersion, resource, Columns.Updated(order), Columns.Number(order), order.Digest) is not null)
+        if (winner is not null && session.Number(Sql.FindVersion, resource, Columns.Updated(order), Columns.Number(order), order.Digest) is not null)
         {
             session.Execute(Sql.AddTally, Tallies.Repeats, 1);
             return new Appended(New: false, Won: false, []);
@@ -33,10 +33,10 @@ internal sealed class Append(Session session, Arrival arrival)
         session.Execute(Sql.SetWinner, resource, version, patient);
         Open(before, resource);
         Open(patient, resource);
-        var members = session.All(Sql.ReferencesOf, row => row.GetString(0), resource).Union(arrival.References).ToList();
-        ReplaceReferences(resource);
+        var earlier = winner is null ? [] : session.All(Sql.ReferencesOf, row => row.GetString(0), resource);
+        ReplaceReferences(resource, earlier);
         OpenReferring(arrival.Key.Reference);
-        OpenMembers(members);
+        OpenMembers(earlier.Union(arrival.References));
         return new Appended(New: true, Won: true, [.. _wake]);
     }
 
@@ -73,9 +73,13 @@ internal sealed class Append(Session session, Arrival arrival)
         return wins;
     }
 
-    private void ReplaceReferences(long resource)
+    private void ReplaceReferences(long resource, List<string> earlier)
     {
-        session.Execute(Sql.ClearReferences, resource);
+        if (earlier.Count > 0)
+        {
+            session.Execute(Sql.ClearReferences, resource);
+        }
+
         foreach (var target in arrival.References)
         {
             session.Execute(Sql.AddReference, Source, target, resource);
@@ -103,14 +107,14 @@ internal sealed class Append(Session session, Arrival arrival)
     }
 
     // A panel or report tells its members that they belong together, so they are read again when it changes.
-    private void OpenMembers(List<string> members)
+    private void OpenMembers(IEnumerable<string> members)
     {
         if (arrival.Key.Type is not ("Observation" or "DiagnosticReport"))
         {
             return;
         }
 
-        foreach (var member in members)
+        foreach (var member in members.Where(CanBeObservation))
         {
             foreach (var (resource, patient) in session.All(Sql.Member, row => (row.GetInt64(0), Columns.OptionalNumber(row, 1)), Source, member))
             {
@@ -118,6 +122,10 @@ internal sealed class Append(Session session, Arrival arrival)
             }
         }
     }
+
+    // by id, or by the URL of a Bundle entry, which does not tell the type
+    private static bool CanBeObservation(string reference) =>
+        reference.StartsWith("Observation/", StringComparison.Ordinal) || reference.Contains(':', StringComparison.Ordinal);
 
     // A new mark each time: a turn under way that has read the older version must not close this row.
     private void Open(long? patient, long resource)
