@@ -141,7 +141,7 @@ internal static class Sql
     private const string DeliveryColumns =
         """
         SELECT identity, patient, body, valued, wanted, delivered, revisions, final_seen, server_id, server_version,
-               tries, due, since, parked, parked_text, withdrawn
+               tries, due, since, parked, parked_text, withdrawn, retracted
         FROM outcome
         """;
 
@@ -175,8 +175,15 @@ internal static class Sql
     public const string MarkDelivered =
         """
         UPDATE outcome SET delivered = $2, revisions = revisions + 1, server_id = $3, server_version = $4,
-            final_seen = CASE WHEN $5 = 1 THEN 1 ELSE final_seen END, tries = 0
+            final_seen = CASE WHEN $5 = 1 THEN 1 ELSE final_seen END, retracted = $6, tries = 0
         WHERE identity = $1 AND delivered < $2 AND wanted >= $2 AND withdrawn = 0
+        """;
+
+    public const string Adopt =
+        """
+        UPDATE outcome SET revisions = max(revisions, 1), server_id = $2, server_version = $3,
+            final_seen = CASE WHEN $4 = 1 THEN 1 ELSE final_seen END, tries = 0, due = 0
+        WHERE identity = $1 AND withdrawn = 0
         """;
 
     public const string MarkNothingToSend =

@@ -23,9 +23,10 @@ public sealed partial class Store
     /// <param name="serverId">Logical id.</param>
     /// <param name="serverVersion">Version that the server gave it.</param>
     /// <param name="finalSeen">The edition was final, amended or corrected.</param>
-    public Task<bool> MarkDeliveredAsync(Guid identity, long wanted, string serverId, string? serverVersion, bool finalSeen) => _writer.RunAsync(session =>
+    /// <param name="retracted">The edition was a retraction.</param>
+    public Task<bool> MarkDeliveredAsync(Guid identity, long wanted, string serverId, string? serverVersion, bool finalSeen, bool retracted = false) => _writer.RunAsync(session =>
     {
-        var marked = session.Execute(Sql.MarkDelivered, Columns.Identity(identity), wanted, serverId, serverVersion, finalSeen ? 1 : 0) == 1;
+        var marked = session.Execute(Sql.MarkDelivered, Columns.Identity(identity), wanted, serverId, serverVersion, finalSeen ? 1 : 0, retracted ? 1 : 0) == 1;
         if (marked)
         {
             Count(session, Tallies.Delivered);
@@ -33,6 +34,10 @@ public sealed partial class Store
 
         return marked;
     });
+
+    /// <summary>The server holds an older edition of ours that we had lost sight of; the wanted one stays pending, due at once.</summary>
+    public Task<bool> AdoptAsync(Guid identity, string serverId, string serverVersion, bool finalSeen) =>
+        UpdateAsync(Sql.Adopt, identity, serverId, serverVersion, finalSeen ? 1 : 0);
 
     /// <summary>There is nothing to send for the edition, as for a value withheld from the start.</summary>
     public Task<bool> MarkNothingToSendAsync(Guid identity, long wanted) => UpdateAsync(Sql.MarkNothingToSend, identity, wanted);
@@ -81,6 +86,7 @@ public sealed partial class Store
             Parked = Columns.OptionalText(row, 13),
             ParkedText = Columns.OptionalText(row, 14),
             WithdrawnByPerson = row.GetInt64(15) == 1,
+            Retracted = row.GetInt64(16) == 1,
         };
     }
 }

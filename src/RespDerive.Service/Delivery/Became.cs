@@ -1,3 +1,4 @@
+using RespDerive.Fhir.Writing;
 using RespDerive.Timeline;
 
 namespace RespDerive.Service.Delivery;
@@ -9,10 +10,10 @@ internal abstract record Became
     public sealed record Nothing : Became;
 
     /// <summary>The server holds the wanted edition.</summary>
-    public sealed record Delivered(Outcome Outcome, string Id, string? Version, bool Final) : Became;
+    public sealed record Delivered(Outcome Outcome, string Id, string? Version, EditionStatus Status) : Became;
 
     /// <summary>The server holds an older edition of ours; the wanted one is still to be sent.</summary>
-    public sealed record Adopted(string Id, string? Version, bool Final) : Became;
+    public sealed record Adopted(string Id, string Version, bool Final) : Became;
 
     /// <summary>To be tried again.</summary>
     public sealed record Again(TimeSpan? After) : Became;

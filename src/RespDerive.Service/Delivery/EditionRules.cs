@@ -5,20 +5,21 @@ using RespDerive.Timeline;
 namespace RespDerive.Service.Delivery;
 
 /// <summary>Which edition of a result the server should hold now. Pure.</summary>
-internal static class EditionRules
+public static class EditionRules
 {
     /// <summary>The outcome to render and its edition; null when there is nothing to send.</summary>
     /// <param name="delivery">State of the result.</param>
     /// <param name="existed">True when an earlier attempt may have reached the server although none was confirmed.</param>
     public static (Outcome Outcome, Edition Edition)? Of(Storage.Delivery delivery, bool existed = false)
     {
+        ArgumentNullException.ThrowIfNull(delivery);
         var current = delivery.Current;
         if (current is { Withheld: null })
         {
             return (current, Edition(delivery, StatusOf(delivery, current)));
         }
 
-        return delivery is { LastValued: { } last } && (delivery.Revisions > 0 || existed)
+        return delivery is { LastValued: { } last, Retracted: false } && (delivery.Revisions > 0 || existed)
             ? (last, Edition(delivery, EditionStatus.EnteredInError) with { Withheld = current?.Withheld })
             : null;
     }

@@ -179,5 +179,5 @@ internal sealed class Postman(Target target, Site site, Store store, IOptions<Se
     }
 
     private static Became.Delivered Delivered(Outcome outcome, Edition edition, ServerAnswer.Delivered there) =>
-        new(outcome, there.Id, there.Version, edition.Status is EditionStatus.Final or EditionStatus.Amended or EditionStatus.Corrected);
+        new(outcome, there.Id, there.Version, edition.Status);
 }

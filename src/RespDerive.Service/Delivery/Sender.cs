@@ -1,6 +1,7 @@
 using System.Diagnostics.Metrics;
 using Microsoft.Extensions.Logging;
 using Microsoft.Extensions.Options;
+using RespDerive.Fhir.Writing;
 using RespDerive.Service.Operations;
 using RespDerive.Storage;
 
@@ -48,12 +49,12 @@ internal sealed class Sender(Store store, Postman postman, IOptions<ServiceOptio
                 await store.MarkNothingToSendAsync(delivery.Identity, delivery.Wanted);
                 break;
             case Became.Delivered there:
-                await store.MarkDeliveredAsync(delivery.Identity, delivery.Wanted, there.Id, there.Version, there.Final);
+                await store.MarkDeliveredAsync(delivery.Identity, delivery.Wanted, there.Id, there.Version,
+                    finalSeen: there.Status is EditionStatus.Final or EditionStatus.Amended or EditionStatus.Corrected, retracted: there.Status == EditionStatus.EnteredInError);
                 feed.Delivered(there.Outcome, (int)delivery.Revisions + 1);
                 break;
             case Became.Adopted there:
-                // The server holds an older state of ours that we had lost sight of: take it as delivered, and the wanted edition follows.
-                await store.MarkDeliveredAsync(delivery.Identity, delivery.Wanted - 1, there.Id, there.Version, there.Final);
+                await store.AdoptAsync(delivery.Identity, there.Id, there.Version, there.Final);
                 break;
             case Became.Again again:
                 var wait = again.After ?? BackOff.After(delivery.Tries, options.Value.Delivery.LongestBackOff, delivery.Identity.ToString());

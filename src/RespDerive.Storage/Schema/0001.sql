@@ -94,6 +94,7 @@ CREATE TABLE outcome (
     since      INTEGER NOT NULL,
     revisions  INTEGER NOT NULL DEFAULT 0,
     final_seen INTEGER NOT NULL DEFAULT 0,
+    retracted  INTEGER NOT NULL DEFAULT 0,
     server_id  TEXT,
     server_version TEXT,
     tries      INTEGER NOT NULL DEFAULT 0,

@@ -29,6 +29,9 @@ public sealed record Delivery
     /// <summary>True when an edition with status final, amended or corrected is at the server.</summary>
     public required bool FinalSeen { get; init; }
 
+    /// <summary>True when the last edition at the server is a retraction.</summary>
+    public bool Retracted { get; init; }
+
     /// <summary>Logical id at the server; null when none was created.</summary>
     public string? ServerId { get; init; }
 

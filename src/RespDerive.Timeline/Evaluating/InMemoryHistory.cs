@@ -15,6 +15,9 @@ public sealed class InMemoryHistory : IPatientHistory
     /// <summary>Current outcomes, in no particular order.</summary>
     public IReadOnlyCollection<Outcome> All => _outcomes.Values;
 
+    /// <summary>How many readings there are.</summary>
+    public int Count => _readings.Values.Sum(readings => readings.Count);
+
     /// <inheritdoc/>
     public IReadOnlyList<Reading> ReadingsOf(ResourceKey resource) => _readings.GetValueOrDefault(resource, []);
 
