@@ -27,7 +27,7 @@ internal static class Profiles
             new(16.0, v => v with { Peep = 12 }),
         ],
         Lung = h => new RespiratorySystem(0.031 - (0.004 * Collapse(h)) + Ramp(h, 8, 0, 30, 0.008), 11, 13),
-        Body = h => new Circulation(245, 0.80, 6.8, 10.8, 25, 0.30 + (0.06 * Collapse(h)) - Ramp(h, 8, 0, 30, 0.10), 0.53, WashIn: 1.5),
+        Body = h => new Circulation(245, 0.80, 6.8, 10.8, 26, 0.30 + (0.06 * Collapse(h)) - Ramp(h, 8, 0, 30, 0.10), 0.61 - Ramp(h, 8, 0, 30, 0.05), WashIn: 1.5),
     };
 
     /// <summary>Airflow obstruction (as in COPD): expiration is too short at first, so intrinsic PEEP arises by itself.</summary>
@@ -41,7 +41,7 @@ internal static class Profiles
         SpO2Target = (0.88, 0.93),
         AnalysisTime = true,
         HoldsFromDevice = true,
-        Start = new Ventilation(BreathMode.VolumeControlled) { TidalVolume = 0.48, Flow = 0.75, Rate = 22, Peep = 5, FiO2 = 0.35 },
+        Start = new Ventilation(BreathMode.VolumeControlled) { TidalVolume = 0.48, Flow = 0.75, Rate = 22, Peep = 5 / Units.MillibarPerCmH2O, FiO2 = 0.35 },
         Plan =
         [
             new(1.6, v => v with { Rate = 18 }),
@@ -49,7 +49,7 @@ internal static class Profiles
             new(9.0, v => v with { Rate = 16 }),
         ],
         Lung = h => new RespiratorySystem(0.060, 17 - Ramp(h, 4, 0, 24, 4), 33 - Ramp(h, 4, 0, 24, 11)),
-        Body = h => new Circulation(205, 0.82, 5.4, 13.6, 30, 0.17 - Ramp(h, 6, 0, 30, 0.04), 0.52, WashIn: 5),
+        Body = h => new Circulation(205, 0.82, 5.4, 13.6, 30, 0.17 - Ramp(h, 6, 0, 30, 0.04), 0.58, WashIn: 5),
     };
 
     /// <summary>Getting better under pressure control, then breathing with pressure support.</summary>

@@ -1,4 +1,5 @@
 using System.Text.Json.Nodes;
+using RespDerive.Sandbox.Patients.Gas;
 
 namespace RespDerive.Sandbox.Patients.Charting;
 
@@ -46,15 +47,16 @@ internal sealed class BloodGases(Chart chart, Profile profile, int bedNumber, Di
         chart.File(WardEventKind.BloodGas, now.At, filed, chart.Bed.Specimen(specimen, now.At, arterial: true), $"arterial sample of {now.At:HH:mm}");
         var units = profile.Units;
         var gas = now.Gas;
-        // Withdrawn samples were another patient's.
+        // A withdrawn sample was another patient's, who is worse off in every respect.
         var mixedUp = mishap == Mishap.Withdrawn ? 0.7 : 1;
-        var po2 = units.Tension(with.PO2(gas.PaO2) * mixedUp);
+        var ph = gas.Ph + Math.Log10(mixedUp);
+        var po2 = units.Tension(with.PO2(gas.PaO2 * mixedUp));
         (Code Code, string Part, JsonObject Quantity)[] results =
         [
             (Codes.PaO2, "po2", mishap == Mishap.Corrected ? units.Tension(with.PO2(gas.PaO2) * 1.4) : po2),
-            (Codes.PaCO2, "pco2", units.Tension(with.PCO2(gas.PaCO2) / mixedUp)),
-            (Codes.Ph, "ph", Units.Quantity(with.Ph(gas.Ph), 2, "[pH]", "pH")),
-            (Codes.SaO2, "so2", Units.Quantity(with.SaO2(gas.SaO2) * 100, 1, "%")),
+            (Codes.PaCO2, "pco2", units.Tension(with.PCO2(gas.PaCO2 / mixedUp))),
+            (Codes.Ph, "ph", Units.Quantity(with.Ph(ph), 2, "[pH]", "pH")),
+            (Codes.SaO2, "so2", Units.Quantity(with.SaO2(Dissociation.Saturation(gas.PaO2 * mixedUp, ph)) * 100, 1, "%")),
         ];
         var written = new List<(Code Code, JsonObject Observation)>();
         foreach (var (code, part, quantity) in results)

@@ -7,7 +7,7 @@ namespace RespDerive.Sandbox.Patients.Charting;
 internal sealed record Units(string Gas, string AirwayPressure, bool FractionAsOne, bool VolumeInLitres, bool HeightInMetres = false)
 {
     private const double KilopascalPerMmHg = 0.133322387415;
-    private const double MillibarPerCmH2O = 0.980665;
+    public const double MillibarPerCmH2O = 0.980665;
 
     /// <summary>A gas tension given in mm[Hg].</summary>
     public JsonObject Tension(double value) => Gas == "kPa" ? Quantity(value * KilopascalPerMmHg, 2, "kPa") : Quantity(value, 1, "mm[Hg]", "mmHg");
