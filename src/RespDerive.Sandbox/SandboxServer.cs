@@ -125,6 +125,10 @@ public sealed class SandboxServer : IAsyncDisposable
         {
             return FhirAnswer.Error(refusal);
         }
+        catch (InvalidOperationException)
+        {
+            return FhirAnswer.Error(Router.WrongKind);
+        }
     }
 
     private void Record(FhirRequest request, FhirAnswer answer, int status)

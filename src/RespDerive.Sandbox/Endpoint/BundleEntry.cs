@@ -28,7 +28,7 @@ internal sealed record BundleEntry(int Position, string Method, string Url, stri
     public static List<BundleEntry> All(JsonObject bundle, string baseUrl)
     {
         var entries = new List<BundleEntry>();
-        foreach (var node in bundle["entry"] as JsonArray ?? [])
+        foreach (var node in bundle["entry"]?.AsArray() ?? [])
         {
             if (node?["request"] is not JsonObject request || request.Text("method") is not { } method || request.Text("url") is not { } url)
             {

@@ -5,6 +5,9 @@ namespace RespDerive.Sandbox.Endpoint;
 /// <summary>From method and path to the interaction (R4 RESTful API, "Summary"). Refusals become OperationOutcomes here.</summary>
 internal sealed class Router(Reading reading, Writing writing, Searching searching, Func<FhirAnswer> capability)
 {
+    /// <summary>What an InvalidOperationException of a JSON node means.</summary>
+    public static Refusal WrongKind => Refusal.Malformed("an element has the wrong JSON type");
+
     /// <summary>Answers everything below the base except Bundles.</summary>
     public FhirAnswer Answer(FhirRequest request)
     {
@@ -15,6 +18,10 @@ internal sealed class Router(Reading reading, Writing writing, Searching searchi
         catch (Refusal refusal)
         {
             return FhirAnswer.Error(refusal);
+        }
+        catch (InvalidOperationException)
+        {
+            return FhirAnswer.Error(WrongKind);
         }
     }
 

@@ -18,11 +18,12 @@ internal sealed class Feed : IAsyncDisposable
     private readonly SandboxOptions _options;
     private readonly Task _work;
 
-    public Feed(SubscriptionText text, HttpClient http, NotificationCounts counts, SandboxOptions options)
+    /// <summary>A renewed subscription goes on where the one it <paramref name="replaces"/> ends.</summary>
+    public Feed(SubscriptionText text, HttpClient http, NotificationCounts counts, SandboxOptions options, Feed? replaces)
     {
         Text = text;
         (_http, _counts, _options) = (http, counts, options);
-        _work = Task.Run(SendAll);
+        _work = Task.Run(() => SendAll(replaces?._work ?? Task.CompletedTask));
     }
 
     public SubscriptionText Text { get; }
@@ -36,17 +37,26 @@ internal sealed class Feed : IAsyncDisposable
         }
     }
 
-    /// <summary>Ends the feed; what is still queued is dropped.</summary>
+    /// <summary>Takes no more; what is queued is still sent.</summary>
+    public void Finish() => _queue.Writer.TryComplete();
+
+    /// <summary>Takes no more; what is queued is dropped.</summary>
+    public void Stop()
+    {
+        Finish();
+        _stop.Cancel();
+    }
+
     public async ValueTask DisposeAsync()
     {
-        _queue.Writer.TryComplete();
-        await _stop.CancelAsync().ConfigureAwait(false);
+        Stop();
         await _work.ConfigureAwait(false);
         _stop.Dispose();
     }
 
-    private async Task SendAll()
+    private async Task SendAll(Task before)
     {
+        await before.ConfigureAwait(false);
         await foreach (var version in _queue.Reader.ReadAllAsync().ConfigureAwait(false))
         {
             _counts.Done(await Deliver(version).ConfigureAwait(false));

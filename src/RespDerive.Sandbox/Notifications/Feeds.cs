@@ -10,7 +10,7 @@ namespace RespDerive.Sandbox.Notifications;
 internal sealed class Feeds(ResourceStore store, Faults faults, SandboxOptions options, string baseUrl) : IAsyncDisposable
 {
     private readonly Dictionary<string, Feed> _feeds = [];
-    private readonly List<Task> _ending = [];
+    private readonly List<Feed> _ended = [];
     private readonly HttpClient _http = new() { Timeout = TimeSpan.FromSeconds(10) };
 
     public NotificationCounts Counts { get; } = new();
@@ -38,13 +38,15 @@ internal sealed class Feeds(ResourceStore store, Faults faults, SandboxOptions o
 
     public async ValueTask DisposeAsync()
     {
-        store.Read(() =>
+        Feed[] all = store.Read<Feed[]>(() => [.. _ended, .. _feeds.Values]);
+        foreach (var feed in all)
         {
-            _ending.AddRange(_feeds.Values.Select(f => f.DisposeAsync().AsTask()));
-            _feeds.Clear();
-            return 0;
-        });
-        await Task.WhenAll(_ending).ConfigureAwait(false);
+            feed.Stop();
+        }
+        foreach (var feed in all)
+        {
+            await feed.DisposeAsync().ConfigureAwait(false);
+        }
         _http.Dispose();
     }
 
@@ -72,19 +74,27 @@ internal sealed class Feeds(ResourceStore store, Faults faults, SandboxOptions o
         }
         if (_feeds.Remove(version.Id, out var ended))
         {
-            _ending.Add(ended.DisposeAsync().AsTask());
+            _ended.Add(ended);
+            if (status == "requested")
+            {
+                ended.Finish();
+            }
+            else
+            {
+                ended.Stop();
+            }
         }
         if (status == "requested")
         {
-            Activate(version.Id, resource!);
+            Activate(version.Id, resource!, ended);
         }
     }
 
-    private void Activate(string id, JsonObject resource)
+    private void Activate(string id, JsonObject resource, Feed? replaces)
     {
         try
         {
-            _feeds.Add(id, new Feed(SubscriptionText.Read(resource, baseUrl), _http, Counts, options));
+            _feeds.Add(id, new Feed(SubscriptionText.Read(resource, baseUrl), _http, Counts, options, replaces));
             resource["status"] = "active";
             resource.Remove("error");
         }

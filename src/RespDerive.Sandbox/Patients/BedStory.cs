@@ -21,6 +21,7 @@ internal sealed class BedStory
     private Instruments _instruments;
     private Ventilation _set;
     private double _trapped;
+    private double _wander;
     private double _nextSlip;
     private double? _repairSlip;
 
@@ -71,6 +72,8 @@ internal sealed class BedStory
         }
         var hours = minute / 60.0;
         _set = _staff.Attend(hours, _set, _streams.SpO2);
+        // Lungs are never quite the same: a slow, small random walk that is drawn back to its course.
+        _wander = (0.97 * _wander) + _dice.Normal(0.004);
         var lung = Lung(hours);
         var breath = Breathe(lung);
         var delivered = _instruments.Delivered(_set.FiO2);
@@ -87,7 +90,7 @@ internal sealed class BedStory
     private RespiratorySystem Lung(double hours)
     {
         var lung = _profile.Lung(hours);
-        return new RespiratorySystem(lung.Compliance * _individual.Compliance, lung.InspiratoryResistance * _individual.Resistance, lung.ExpiratoryResistance * _individual.Resistance);
+        return new RespiratorySystem(lung.Compliance * _individual.Compliance * (1 + _wander), lung.InspiratoryResistance * _individual.Resistance, lung.ExpiratoryResistance * _individual.Resistance);
     }
 
     private Circulation Body(double hours)
@@ -95,7 +98,7 @@ internal sealed class BedStory
         var body = _profile.Body(hours);
         return body with
         {
-            Shunt = body.Shunt * _individual.Shunt,
+            Shunt = body.Shunt * _individual.Shunt * (1 - (2 * _wander)),
             Hemoglobin = body.Hemoglobin + _individual.Hemoglobin,
             CarbonDioxideProduction = body.CarbonDioxideProduction * _individual.Production,
         };

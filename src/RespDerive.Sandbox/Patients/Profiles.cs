@@ -26,7 +26,7 @@ internal static class Profiles
             new(7.0, v => v with { Peep = 14 }),
             new(16.0, v => v with { Peep = 12 }),
         ],
-        Lung = h => new RespiratorySystem(0.031 - (0.004 * Collapse(h)) + Ramp(h, 8, 0, 30, 0.008), 11, 13),
+        Lung = h => new RespiratorySystem(0.032 - (0.0035 * Collapse(h)) + Ramp(h, 8, 0, 30, 0.008), 11, 13),
         Body = h => new Circulation(245, 0.80, 6.8, 10.8, 26, 0.30 + (0.06 * Collapse(h)) - Ramp(h, 8, 0, 30, 0.10), 0.61 - Ramp(h, 8, 0, 30, 0.05), WashIn: 1.5),
     };
 
@@ -49,7 +49,7 @@ internal static class Profiles
             new(9.0, v => v with { Rate = 16 }),
         ],
         Lung = h => new RespiratorySystem(0.060, 17 - Ramp(h, 4, 0, 24, 4), 33 - Ramp(h, 4, 0, 24, 11)),
-        Body = h => new Circulation(205, 0.82, 5.4, 13.6, 30, 0.17 - Ramp(h, 6, 0, 30, 0.04), 0.58, WashIn: 5),
+        Body = h => new Circulation(205, 0.82, 5.4, 13.6, 30, 0.17 - Ramp(h, 6, 0, 30, 0.04), 0.61, WashIn: 5),
     };
 
     /// <summary>Getting better under pressure control, then breathing with pressure support.</summary>

@@ -19,16 +19,36 @@ internal sealed record MissingCriterion(SearchParameter Parameter, bool Missing)
         Missing == (version.Index.Tokens(Name).Count + version.Index.References(Name).Count + version.Index.Dates(Name).Count == 0);
 }
 
-internal sealed record DateCriterion(string Parameter, IReadOnlyList<(string Prefix, DateRange Value)> Wanted) : Criterion(Parameter)
+internal sealed record DateCriterion(string Parameter, (string Prefix, DateRange Value)[] Wanted) : Criterion(Parameter)
 {
     private static readonly string[] s_prefixes = ["eq", "ne", "gt", "lt", "ge", "le", "sa", "eb"];
 
     public override bool Matches(StoredVersion version)
     {
-        IReadOnlyList<DateRange> values = Name == "_lastUpdated"
-            ? [new DateRange(version.LastUpdated, version.LastUpdated.AddMilliseconds(1))]
-            : version.Index.Dates(Name);
-        return values.Any(value => Wanted.Any(wanted => value.Satisfies(wanted.Prefix, wanted.Value)));
+        if (Name == "_lastUpdated")
+        {
+            return Matches(new DateRange(version.LastUpdated, version.LastUpdated.AddMilliseconds(1)));
+        }
+        foreach (var value in version.Index.Dates(Name))
+        {
+            if (Matches(value))
+            {
+                return true;
+            }
+        }
+        return false;
+    }
+
+    private bool Matches(DateRange value)
+    {
+        foreach (var (prefix, wanted) in Wanted)
+        {
+            if (value.Satisfies(prefix, wanted))
+            {
+                return true;
+            }
+        }
+        return false;
     }
 
     public static DateCriterion Parse(string name, IEnumerable<string> values) => new(name, [.. values.Select(value =>
@@ -41,11 +61,23 @@ internal sealed record DateCriterion(string Parameter, IReadOnlyList<(string Pre
 }
 
 /// <summary><c>code</c> (any system), <c>system|code</c>, <c>|code</c> (no system), <c>system|</c> (any code).</summary>
-internal sealed record TokenCriterion(string Parameter, bool Not, IReadOnlyList<(string? System, string? Code)> Wanted) : Criterion(Parameter)
+internal sealed record TokenCriterion(string Parameter, bool Not, (string? System, string? Code)[] Wanted) : Criterion(Parameter)
 {
-    public override bool Matches(StoredVersion version) => Not != version.Index.Tokens(Name).Any(token => Wanted.Any(wanted =>
-        (wanted.Code is null || wanted.Code == token.Code)
-        && (wanted.System is null || wanted.System == (token.System ?? ""))));
+    public override bool Matches(StoredVersion version)
+    {
+        // Plain loops: a poll asks this of every Observation there is.
+        foreach (var token in version.Index.Tokens(Name))
+        {
+            foreach (var (system, code) in Wanted)
+            {
+                if ((code is null || code == token.Code) && (system is null || system == (token.System ?? "")))
+                {
+                    return !Not;
+                }
+            }
+        }
+        return Not;
+    }
 
     public static TokenCriterion Parse(string name, bool not, IEnumerable<string> values) => new(name, not, [.. values.Select(value =>
     {

@@ -11,16 +11,19 @@ internal sealed class SearchIndex
 {
     public static readonly SearchIndex Empty = new();
 
+    private static readonly List<Token> s_noTokens = [];
+    private static readonly List<DateRange> s_noDates = [];
+
     private readonly Dictionary<string, List<Token>> _tokens = [];
     private readonly Dictionary<string, List<string>> _references = [];
     private readonly Dictionary<string, List<DateRange>> _dates = [];
 
-    public IReadOnlyList<Token> Tokens(string name) => _tokens.GetValueOrDefault(name) ?? [];
+    public List<Token> Tokens(string name) => _tokens.GetValueOrDefault(name) ?? s_noTokens;
 
     /// <summary>As written, and once more without the version when they carry one.</summary>
     public IReadOnlyList<string> References(string name) => _references.GetValueOrDefault(name) ?? [];
 
-    public IReadOnlyList<DateRange> Dates(string name) => _dates.GetValueOrDefault(name) ?? [];
+    public List<DateRange> Dates(string name) => _dates.GetValueOrDefault(name) ?? s_noDates;
 
     /// <summary>Keys under which the store finds a resource without walking the whole type.</summary>
     public IEnumerable<string> Shortcuts =>

@@ -41,9 +41,9 @@ internal sealed record SearchParameter(string Name, SearchKind Kind, string? Tar
             ["DeviceMetric"] = [identifier, Token("category"), Token("type"), Reference("source"), Reference("parent")],
             ["Procedure"] = [identifier, status, code, category, .. subject, encounter, Date("date", "performedDateTime", "performedPeriod")],
             ["Condition"] = [identifier, code, category, .. subject, encounter],
-            ["Library"] = [identifier, status, Token("version")],
+            ["Library"] = [identifier, status, Token("version"), Token("url")],
             ["AuditEvent"] = [Token("type"), Reference("entity", "entity.what"), Date("date", "recorded")],
-            ["Subscription"] = [status, Token("type", "channel.type")],
+            ["Subscription"] = [status, Token("type", "channel.type"), Token("url", "channel.endpoint")],
         };
     }
 

@@ -143,6 +143,7 @@ public sealed class ReadAndWriteTests
         (await c.Post("Observation", Observation(patient: "nowhere"))).IsOutcome(422);
         (await c.Post("Observation", Observation(more: ",\"dataAbsentReason\":{\"text\":\"x\"}"))).IsOutcome(422);
         (await c.Post("Observation", Observation(more: ",\"performer\":[{\"reference\":\"Device/1\"}]"))).IsOutcome(422);
+        (await c.Post("", "{\"resourceType\":\"Bundle\",\"type\":\"batch\",\"entry\":{}}")).IsOutcome(400);
         (await c.Send("PATCH", "Observation/1", "{}")).IsOutcome(405);
         (await c.Send("POST", "Observation", "<Observation/>", "application/fhir+xml")).IsOutcome(415);
     }

@@ -89,6 +89,23 @@ public sealed class SubscriptionTests
         Assert.Equal(0, hook.Waiting);
     }
 
+    // "requested" again is how a client renews (end, error); what is queued is not lost and the order holds.
+    [Fact]
+    public async Task Renewal_keeps_what_is_queued()
+    {
+        await using var hook = await Receiver.Start();
+        await using var c = await Start(new SandboxOptions { NotificationBackOff = TimeSpan.FromMilliseconds(1), NotificationAttempts = 1000 });
+        hook.RefuseNext(int.MaxValue);
+        var id = await c.Created(Subscription("Observation", hook.Url));
+        var first = await c.Created(Observation());
+        Assert.Equal(200, (await c.Put($"Subscription/{id}", Subscription("Observation", hook.Url).Replace("\"status\"", $"\"id\":\"{id}\",\"status\"", StringComparison.Ordinal))).Status);
+        var second = await c.Created(Observation());
+        hook.RefuseNext(0);
+        Assert.EndsWith(first, (await hook.Next()).Path, StringComparison.Ordinal);
+        Assert.EndsWith(second, (await hook.Next()).Path, StringComparison.Ordinal);
+        Assert.Equal([id], await c.Found($"Subscription?status=active&url={hook.Url}"));
+    }
+
     [Fact]
     public async Task A_transaction_notifies_only_what_it_committed()
     {

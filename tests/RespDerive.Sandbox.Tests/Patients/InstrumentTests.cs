@@ -6,7 +6,7 @@ namespace RespDerive.Sandbox.Tests.Patients;
 public sealed class InstrumentTests
 {
     private static readonly DateTimeOffset s_from = new(2026, 1, 2, 6, 0, 0, TimeSpan.Zero);
-    private static readonly Scenario[] s_wards = [.. Enumerable.Range(1, 25).Select(seed => Scenario.Play(seed, s_from, TimeSpan.FromHours(6)))];
+    private static readonly Scenario[] s_wards = [.. Enumerable.Range(1, 16).Select(seed => Scenario.Play(seed, s_from, TimeSpan.FromHours(5)))];
 
     // Limits of ISO 80601-2-12 and ISO 80601-2-55, from memory; half a last digit is added for rounding.
     [Theory]
@@ -32,9 +32,9 @@ public sealed class InstrumentTests
     public void Gas_results_scatter_as_stated(string loinc, double relative)
     {
         var z = Pairs(loinc).Select(p => (p.Read - p.True) / Math.Max(loinc == "2019-8" ? 1 : 0, relative * p.True)).ToList();
-        Assert.True(z.Count > 80);
-        Assert.InRange(z.Average(), -0.35, 0.35);
-        Assert.InRange(Math.Sqrt(z.Average(x => x * x)), 0.8, 1.2);
+        Assert.True(z.Count > 40);
+        Assert.InRange(z.Average(), -0.4, 0.4);
+        Assert.InRange(Math.Sqrt(z.Average(x => x * x)), 0.75, 1.25);
     }
 
     // Plateau and total PEEP of one hold share the transducer's zero: it cancels in their difference.
@@ -42,7 +42,9 @@ public sealed class InstrumentTests
     public void The_zero_offset_cancels_in_the_driving_pressure()
     {
         var plateaus = Pairs("76259-1").Where(p => !p.Withdrawn).ToDictionary(p => p.Key);
-        Assert.All(Pairs("76247-6").Where(p => plateaus.ContainsKey(p.Key)), peep =>
+        var peeps = Pairs("76247-6").Where(p => plateaus.ContainsKey(p.Key)).ToList();
+        Assert.NotEmpty(peeps);
+        Assert.All(peeps, peep =>
         {
             var plateau = plateaus[peep.Key];
             var error = plateau.Read - peep.Read - (plateau.True - peep.True);
@@ -62,7 +64,7 @@ public sealed class InstrumentTests
             {
                 // Filed late by up to 85 min, a spoiled result may be put right only after the end: take those with time to spare.
                 if (e.Kind is WardEventKind.Measurement or WardEventKind.Hold or WardEventKind.BloodGas && ScenarioTests.Code(e.Json) == loinc
-                    && e.EventTime < s_from.AddHours(4) && ScenarioTests.Value(e.Json) is var (number, unit) && truths.TryGetValue((e.Patient, e.EventTime), out var truth))
+                    && e.EventTime < s_from.AddHours(3.5) && ScenarioTests.Value(e.Json) is var (number, unit) && truths.TryGetValue((e.Patient, e.EventTime), out var truth))
                 {
                     var withdrawn = spoiled.Contains(e.Id);
                     if (!withdrawn || loinc == "76259-1")

@@ -136,12 +136,9 @@ internal sealed class Bed(int number, Profile profile)
 
     private static JsonObject Resource(string type, string id, JsonObject body)
     {
-        var resource = new JsonObject { ["resourceType"] = type, ["id"] = id };
-        foreach (var (name, value) in body)
-        {
-            resource[name] = value?.DeepClone();
-        }
-        return resource;
+        body.Insert(0, "resourceType", type);
+        body.Insert(1, "id", id);
+        return body;
     }
 
     private static JsonObject Loinc(Code code) => new() { ["coding"] = new JsonArray(Coding(code)), ["text"] = code.Name };

@@ -30,7 +30,8 @@ internal sealed record Units(string Gas, string AirwayPressure, bool FractionAsO
     /// <summary>A UCUM quantity with a fixed number of decimals, as instruments print it.</summary>
     public static JsonObject Quantity(double value, int decimals, string code, string? unit = null) => new()
     {
-        ["value"] = JsonNode.Parse(value.ToString($"F{decimals}", CultureInfo.InvariantCulture)),
+        // A decimal keeps its trailing zeros: 7.40 is written as 7.40.
+        ["value"] = decimal.Parse(value.ToString($"F{decimals}", CultureInfo.InvariantCulture), CultureInfo.InvariantCulture),
         ["unit"] = unit ?? code,
         ["system"] = "http://unitsofmeasure.org",
         ["code"] = code,
