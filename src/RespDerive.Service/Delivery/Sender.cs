@@ -65,9 +65,9 @@ internal sealed class Sender(Store store, Postman postman, IOptions<ServiceOptio
                 await store.WithdrawnByPersonAsync(delivery.Identity);
                 break;
             case Became.Parked parked:
-                logger.LogWarning("Result {Identity} is parked: {Code}", delivery.Identity, parked.Code);
+                logger.LogWarning("Result {Identity} is parked: {Code} {Text}", delivery.Identity, parked.Code, parked.Text);
                 await store.ParkAsync(delivery.Identity, parked.Code, parked.Text);
-                feed.Parked(parked.Code);
+                feed.Parked(parked.Code, parked.Text);
                 break;
         }
     }

@@ -15,8 +15,8 @@ public sealed class Feed
     /// <summary>The server has taken an edition of a result.</summary>
     public event Action<Outcome, int>? OnDelivered;
 
-    /// <summary>The server has refused one for good; the code.</summary>
-    public event Action<string>? OnParked;
+    /// <summary>The server has refused one for good; code and what was wrong where.</summary>
+    public event Action<string, string>? OnParked;
 
     internal void Received(string type) => OnReceived?.Invoke(type);
 
@@ -24,5 +24,5 @@ public sealed class Feed
 
     internal void Delivered(Outcome outcome, int revision) => OnDelivered?.Invoke(outcome, revision);
 
-    internal void Parked(string code) => OnParked?.Invoke(code);
+    internal void Parked(string code, string text) => OnParked?.Invoke(code, text);
 }

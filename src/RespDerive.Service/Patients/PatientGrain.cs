@@ -14,16 +14,23 @@ internal interface IPatientGrain : IGrainWithIntegerKey
 }
 
 /// <summary>Takes a patient's turns, one at a time. A queue and nothing more: the turn number in the store is the lock.</summary>
-internal sealed class PatientGrain(PatientTurn turn, ILogger<PatientGrain> logger) : Grain, IPatientGrain
+internal sealed class PatientGrain(PatientTurn turn, TimeProvider time, ILogger<PatientGrain> logger) : Grain, IPatientGrain
 {
+    /// <summary>Messages of one moment come one by one; waiting this long lets one turn see them together.</summary>
+    private static readonly TimeSpan Gather = TimeSpan.FromMilliseconds(400);
+
     /// <inheritdoc/>
     public async Task Wake()
     {
         var patient = this.GetPrimaryKeyLong();
         try
         {
-            while (await turn.TakeAsync(patient))
+            if (turn.IsOpen(patient))
             {
+                await Task.Delay(Gather, time);
+                while (await turn.TakeAsync(patient))
+                {
+                }
             }
         }
         catch (Exception exception)

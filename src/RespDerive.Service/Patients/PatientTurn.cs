@@ -9,6 +9,9 @@ namespace RespDerive.Service.Patients;
 /// <summary>One turn of a patient: read what is open, work out what changes, commit all of it.</summary>
 internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Feed feed, Awaited awaited)
 {
+    /// <summary>True when there is something to read.</summary>
+    public bool IsOpen(long patient) => store.OpenTurn(patient, 1) is { UpTo: > 0 };
+
     /// <summary>Takes one turn. True when more may be open.</summary>
     public async Task<bool> TakeAsync(long patient)
     {
@@ -33,7 +36,7 @@ internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Fee
         }
 
         feed.Turned(changes);
-        return input.More || store.OpenTurn(patient, 1) is { UpTo: > 0 };
+        return input.More || IsOpen(patient);
     }
 
     private (TurnChanges Changes, IReadOnlyList<string> Unresolved) Work(long patient, TurnInput input)

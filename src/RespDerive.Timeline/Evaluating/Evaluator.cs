@@ -65,7 +65,7 @@ public sealed class Evaluator
         };
         if (withheld is not null)
         {
-            return outcome with { Withheld = withheld, Considered = explain ? Story(gathering, slice, definition, anchor) : [] };
+            return outcome with { Withheld = withheld, Missing = gathering.Missing, Considered = explain ? Story(gathering, slice, definition, anchor) : [] };
         }
 
         return outcome with
@@ -117,7 +117,7 @@ public sealed class Evaluator
             .SelectMany(looked => looked.Choice.Readings.Select(reading => Tell(looked.Input, reading, looked.Choice.Blocked!)));
         var outside = gathering.Reasons.Count == 0 ? [] : definition.Result.Needs
             .SelectMany(slot => slot.Kinds.SelectMany(kind => kind.Formula is null ? [kind] : kind.Needs.SelectMany(inner => inner.Kinds)).Select(kind => (slot, kind)))
-            .Where(entry => !gathering.Readings.Any(reading => reading.Kind == entry.kind))
+            .Where(entry => entry.kind != anchor.Kind && !gathering.Readings.Any(reading => reading.Kind == entry.kind))
             .Select(entry => (entry.slot, reading: slice.Of(entry.kind).MinBy(reading => (reading.At - anchor.At).Duration())))
             .Where(entry => entry.reading is not null)
             .Select(entry => Tell(entry.slot.Name, entry.reading!, entry.reading!.Refused ?? Withheld.StalePair));

@@ -12,6 +12,9 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
     /// <summary>Withheld codes of slots that could not be filled.</summary>
     public SortedSet<string> Reasons { get; } = new(StringComparer.Ordinal);
 
+    /// <summary>Names of slots that found nothing at all.</summary>
+    public List<string> Missing { get; } = [];
+
     /// <summary>Flags of readings and pairings used.</summary>
     public SortedSet<string> Flags { get; } = new(StringComparer.Ordinal);
 
@@ -74,6 +77,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         }
 
         Reasons.Add(refusedSetPeep ? Withheld.NoPeepTotal : slot.Missing);
+        Missing.Add(slot.Name);
     }
 
     /// <summary>Fills one option, or leaves everything as it was. Reasons are given only when the option is the one that counts and cannot be filled.</summary>
@@ -99,7 +103,13 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
             else if (!choice.Found)
             {
                 Undo();
-                return (false, derived is not null && slot.Options.Count == 1 ? MissingOf(derived) : []);
+                if (derived is null || slot.Options.Count > 1)
+                {
+                    return (false, []);
+                }
+
+                Missing.AddRange(derived.Result.Needs.Where(inner => inner.Kinds.Intersect(derived.Calling.Anchors).Any()).Select(inner => inner.Name));
+                return (false, MissingOf(derived));
             }
             else if (derived is null)
             {

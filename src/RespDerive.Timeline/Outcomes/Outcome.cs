@@ -118,6 +118,9 @@ public sealed record Outcome
     /// <summary>Withheld code; null when there is a value.</summary>
     public string? Withheld { get; init; }
 
+    /// <summary>What is missing, in words; told only when asked for, never stored.</summary>
+    public IReadOnlyList<string> Missing { get; init; } = [];
+
     /// <summary>Candidates looked at and why each was not used; told only when asked for, never stored.</summary>
     public IReadOnlyList<Candidate> Considered { get; init; } = [];
 

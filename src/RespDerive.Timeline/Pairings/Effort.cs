@@ -25,7 +25,7 @@ internal static class Effort
     {
         var from = anchor.At.Minus(Reach.EffortWindow);
         var to = anchor.At.Plus(Reach.EffortWindow);
-        var passive = new List<Reading>();
+        IReadOnlyList<Reading> passive = [];
         foreach (var rate in slice.Between(Kinds.RateSpontaneous, from, to))
         {
             if (rate.Usable && rate.Value > 0)
@@ -33,10 +33,7 @@ internal static class Effort
                 return new(Yes, [rate]);
             }
 
-            if (rate.Usable)
-            {
-                passive.Add(rate);
-            }
+            passive = rate.Usable ? Nearer(passive, [rate], anchor) : passive;
         }
 
         foreach (var total in slice.Between(Kinds.RateTotal, from, to))
@@ -48,7 +45,7 @@ internal static class Effort
                     return new(Yes, [total, set]);
                 }
 
-                passive.AddRange([total, set]);
+                passive = Nearer(passive, [total, set], anchor);
             }
         }
 
@@ -63,6 +60,10 @@ internal static class Effort
             return new(Yes, [support]);
         }
 
-        return passive.Count > 0 ? new(No, [.. passive.Distinct()]) : null;
+        return passive.Count > 0 ? new(No, passive) : null;
     }
+
+    /// <summary>Of the evidence against effort the closest in time is named, so that a stream does not change it with every reading.</summary>
+    private static IReadOnlyList<Reading> Nearer(IReadOnlyList<Reading> kept, IReadOnlyList<Reading> found, Reading anchor) =>
+        kept.Count == 0 || (found[0].At - anchor.At).Duration() < (kept[0].At - anchor.At).Duration() ? found : kept;
 }

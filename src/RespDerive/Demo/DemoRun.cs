@@ -15,8 +15,8 @@ namespace RespDerive.Demo;
 /// <summary>The demo: three parts that speak only HTTP with each other, in one process.</summary>
 internal sealed class DemoRun : IAsyncDisposable
 {
-    /// <summary>Pressure at the invented ward, which lies near sea level.</summary>
-    private const double Barometer = 752;
+    /// <summary>Pressure at the invented ward, which lies at sea level.</summary>
+    private const double Barometer = 760;
 
     private static readonly TimeSpan Longest = TimeSpan.FromHours(24);
     private static readonly TimeSpan Drain = TimeSpan.FromSeconds(20);

@@ -79,7 +79,7 @@ internal sealed class Screen(TextWriter writer)
     }
 
     /// <summary>The server refused a result for good.</summary>
-    public void Parked(string code) => Line($"       {"",-16} parked by the server: {code}");
+    public void Parked(string code, string text) => Line($"       {"",-16} refused by the server and parked: {code} ({text})");
 
     private void Show(OutcomeChange change)
     {
@@ -99,7 +99,7 @@ internal sealed class Screen(TextWriter writer)
             _held++;
             if (_withheld.Add((outcome.Patient, outcome.Definition, code)))
             {
-                Row(outcome.At, outcome.Patient, $"held  {Name(outcome)}: {code} ({Withheld.Text(code)})");
+                Row(outcome.At, outcome.Patient, $"held  {Name(outcome)}: {code} ({Files.DeriveOutput.Text(outcome)})");
             }
         }
     }

@@ -31,11 +31,14 @@ internal static class DeriveOutput
                 ["anchor"] = outcome.AnchorReference,
                 ["effective"] = outcome.AtText,
                 ["code"] = outcome.Withheld,
-                ["text"] = Withheld.Text(outcome.Withheld!),
+                ["text"] = Text(outcome),
                 ["considered"] = new JsonArray([.. outcome.Considered.Select(Candidate)]),
             }));
         }
     }
+
+    /// <summary>The reason in a sentence, with the names of what is missing.</summary>
+    public static string Text(Outcome outcome) => Withheld.Text(outcome.Withheld!) + (outcome.Missing.Count > 0 ? $" Missing: {string.Join(", ", outcome.Missing.Distinct())}." : "");
 
     /// <summary>Results as a file source would hold them: under our own ids, pointing at the inputs by id and version.</summary>
     public static ResultRenderer Renderer(Site site, ServiceOptions options) => new(site.Catalogue, new RenderOptions
