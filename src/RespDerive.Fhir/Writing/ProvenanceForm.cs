@@ -17,7 +17,7 @@ internal sealed class ProvenanceForm(RenderOptions options, Vocabulary words, Re
         {
             Id = options.UsePutIds ? id.ToString() : null,
             Target = [new ResourceReference(target) { Extension = [new Extension(words.ResultRevision, new PositiveInt(edition.Revision))] }],
-            Occurred = new FhirDateTime(outcome.At),
+            Occurred = new FhirDateTime(outcome.AtText),
             Recorded = edition.Recorded,
             Policy = [$"{words.Definition(definition.Key)}|{outcome.Revision.ToString(CultureInfo.InvariantCulture)}"],
             Activity = Activity(edition),
@@ -38,7 +38,8 @@ internal sealed class ProvenanceForm(RenderOptions options, Vocabulary words, Re
             provenance.PolicyElement.Add(new FhirUri($"{words.Policy}|{outcome.Policy}"));
         }
 
-        provenance.AddExtension(words.ProvenanceId, new Uuid($"urn:uuid:{id}"));
+        // A string: servers rewrite any uri or uuid that equals the address of an entry of the transaction.
+        provenance.AddExtension(words.ProvenanceId, new FhirString(id.ToString()));
         provenance.AddExtension(words.ContentDigest, new FhirString(digest));
         if (edition is { IsRetraction: true, Withheld: { } code })
         {

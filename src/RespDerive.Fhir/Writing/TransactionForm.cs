@@ -63,7 +63,7 @@ internal sealed class TransactionForm(RenderOptions options, Vocabulary words, E
 
     private Bundle.EntryComponent Provenance(Provenance provenance)
     {
-        var own = ((Uuid)provenance.GetExtension(words.ProvenanceId)!.Value!).Value!;
+        var own = "urn:uuid:" + ((FhirString)provenance.GetExtension(words.ProvenanceId)!.Value!).Value!;
         return new Bundle.EntryComponent
         {
             FullUrl = own,

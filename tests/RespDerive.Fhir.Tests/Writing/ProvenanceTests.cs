@@ -99,7 +99,7 @@ public sealed class ProvenanceTests
     [Fact]
     public void The_id_is_the_same_for_a_resend_and_another_for_other_content()
     {
-        static string Id(Outcome outcome, Edition edition) => ((Uuid)Rendered(outcome, edition).GetExtension(Words.ProvenanceId)!.Value!).Value!;
+        static string Id(Outcome outcome, Edition edition) => ((FhirString)Rendered(outcome, edition).GetExtension(Words.ProvenanceId)!.Value!).Value!;
         Assert.Equal(Id(Samples.PfRatio, Samples.First), Id(Samples.PfRatio, Samples.First));
         Assert.NotEqual(Id(Samples.PfRatio, Samples.First), Id(Samples.PfRatio, Samples.Second with { Recorded = Samples.Recorded, Status = EditionStatus.Final }));
         Assert.NotEqual(Id(Samples.PfRatio, Samples.First), Id(Samples.PfRatio with { Published = 146m }, Samples.First));
@@ -109,6 +109,6 @@ public sealed class ProvenanceTests
     public void With_our_own_ids_the_id_is_the_resource_id()
     {
         var provenance = Rendered(Samples.PfRatio, null, options => options with { UsePutIds = true });
-        Assert.Equal("urn:uuid:" + provenance.Id, ((Uuid)provenance.GetExtension(Words.ProvenanceId)!.Value!).Value);
+        Assert.Equal(provenance.Id, ((FhirString)provenance.GetExtension(Words.ProvenanceId)!.Value!).Value);
     }
 }
