@@ -1,5 +1,6 @@
 using System.Buffers;
 using System.Globalization;
+using System.Runtime.InteropServices;
 using System.Security.Cryptography;
 using System.Text.Json;
 using RespDerive.Timeline;
@@ -65,7 +66,7 @@ public static class FactReader
         var key = new ResourceKey(source, type, id is null ? fullUrl! : references.Foreign ? references.Absolute($"{type}/{id}") : id);
         var contained = Contained(root, key, references);
         var content = TypeReader.Read(type, root, references);
-        var digest = Digest(root);
+        var digest = Digest(JsonMarshal.GetRawUtf8Value(root));
         var meta = root.Get("meta") ?? default;
         var version = meta.Text("versionId");
         return new(new ResourceFacts
@@ -110,14 +111,22 @@ public static class FactReader
     private static bool IsId(string id) => id.AsSpan().IndexOfAny(NotInIds) < 0;
 
     /// <summary>SHA-256 of the content without insignificant white space, lower-case hex.</summary>
-    private static string Digest(JsonElement root)
+    private static string Digest(ReadOnlySpan<byte> json)
     {
-        var buffer = new ArrayBufferWriter<byte>(1024);
-        using (var writer = new Utf8JsonWriter(buffer))
+        var kept = new byte[json.Length];
+        var length = 0;
+        var (inText, escaped) = (false, false);
+        foreach (var b in json)
         {
-            root.WriteTo(writer);
+            if (inText || b is not ((byte)' ' or (byte)'\t' or (byte)'\r' or (byte)'\n'))
+            {
+                kept[length++] = b;
+            }
+
+            inText ^= b == '"' && !escaped;
+            escaped = inText && b == '\\' && !escaped;
         }
 
-        return Convert.ToHexStringLower(SHA256.HashData(buffer.WrittenSpan));
+        return Convert.ToHexStringLower(SHA256.HashData(kept.AsSpan(0, length)));
     }
 }

@@ -43,7 +43,9 @@ internal sealed class ObservationRules
             }
         }
 
-        return new() { Readings = readings, Ignored = ignored, Unresolved = readings.Count > 0 ? _links.Unresolved : [] };
+        // What is not read yet may be, once its metric or specimen is known.
+        var worthFetching = readings.Count > 0 || ignored.Exists(one => one.Key is { } key && Keys.Find(key) is { CanBeRead: true });
+        return new() { Readings = readings, Ignored = ignored, Unresolved = worthFetching ? _links.Unresolved : [] };
     }
 
     /// <summary>Own value first; a component is named by its first code, and by a number when that code comes again.</summary>

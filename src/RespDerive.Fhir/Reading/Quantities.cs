@@ -71,8 +71,8 @@ internal sealed class Quantities(CodedMap values, bool fio2PercentRepair)
 
         var canonical = (double)converted;
         return canonical >= kind.Least && canonical <= kind.Greatest
-            ? new(canonical, null, number, unit, flag)
-            : new(double.NaN, kind.RangeCode, number, unit);
+            ? new(canonical, null, number, sent, flag)
+            : new(double.NaN, kind.RangeCode, number, sent);
     }
 
     /// <summary>The UCUM code; without one, the unit for people where it is itself a UCUM code, or, without a system, an alias.</summary>

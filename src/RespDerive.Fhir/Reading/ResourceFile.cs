@@ -118,6 +118,6 @@ public static class ResourceFile
     {
         var text = Json.WithoutMark(pending.WrittenSpan.ToArray());
         pending.ResetWrittenCount();
-        return text.Span.IndexOfAnyExcept(" \t\r"u8) >= 0 ? text : null;
+        return text.Span.IndexOfAnyExcept(" \t\r"u8) >= 0 ? text : default(ReadOnlyMemory<byte>?);
     }
 }

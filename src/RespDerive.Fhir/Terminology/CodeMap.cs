@@ -31,9 +31,7 @@ public sealed class CodeMap
     public IReadOnlyList<MappedCode> Rows { get; }
 
     /// <summary>Rows whose code becomes a reading, alone or with what a metric or specimen adds.</summary>
-    public IEnumerable<MappedCode> Readable => Rows.Where(row => Keys.Find(row.Key) is { } key
-        && (key.Kind is not null || Becomes(key.WhenSetting) || Becomes(key.WhenMeasurement) || Becomes(key.WhenArterial)
-            || key.Name == Meaning.Saturation));
+    public IEnumerable<MappedCode> Readable => Rows.Where(row => Keys.Find(row.Key) is { CanBeRead: true });
 
     /// <summary>The site's word on a code with a unit, else on the code alone; null when it has none.</summary>
     internal string? OfSite(CodeFact code, string? unit) =>
@@ -45,8 +43,6 @@ public sealed class CodeMap
 
     /// <summary>The site's word on a code, else the shipped meaning.</summary>
     internal string? Of(CodeFact code) => OfSite(code, null) ?? OfTables(code);
-
-    private static bool Becomes(string name) => name.Length > 0 && Keys.Find(name)?.Kind is not null;
 
     private static IEnumerable<MappedCode> Shipped(bool snomed) =>
     [

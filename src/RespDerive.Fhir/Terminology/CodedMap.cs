@@ -46,16 +46,19 @@ public sealed class CodedMap
         return null;
     }
 
-    /// <summary>Lower case, hyphens and runs of white space as one space.</summary>
+    /// <summary>Lower-case words with one space between them, whatever else stood there.</summary>
     private static string Plain(string words)
     {
         var plain = new StringBuilder(words.Length);
-        foreach (var c in words.Trim())
+        foreach (var c in words)
         {
-            var kept = c is '-' or '_' || char.IsWhiteSpace(c) ? ' ' : char.ToLowerInvariant(c);
-            if (kept != ' ' || (plain.Length > 0 && plain[^1] != ' '))
+            if (char.IsLetterOrDigit(c))
             {
-                plain.Append(kept);
+                plain.Append(char.ToLowerInvariant(c));
+            }
+            else if (plain.Length > 0 && plain[^1] != ' ')
+            {
+                plain.Append(' ');
             }
         }
 

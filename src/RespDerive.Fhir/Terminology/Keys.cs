@@ -15,8 +15,13 @@ internal sealed record Key(string Name, IReadOnlyList<string> Broader, string Wh
     /// <summary>The kind; null for a key that is recognised only to be kept apart.</summary>
     public Kind? Kind { get; } = Kinds.Find(Name) ?? Events.All.FirstOrDefault(kind => kind.Key == Name);
 
+    /// <summary>True when it is a kind, or can become one by what the metric, the specimen or the category says.</summary>
+    public bool CanBeRead => Kind is not null || Name == Meaning.Saturation || IsKind(WhenSetting) || IsKind(WhenMeasurement) || IsKind(WhenArterial);
+
     /// <summary>True for a key that another key turns into when the specimen is arterial.</summary>
     public bool IsArterial => Keys.Arterial.Contains(Name);
+
+    private static bool IsKind(string name) => name.Length > 0 && Keys.Find(name)?.Kind is not null;
 }
 
 /// <summary>All keys.</summary>

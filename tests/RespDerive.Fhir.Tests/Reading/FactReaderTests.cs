@@ -117,6 +117,14 @@ public class FactReaderTests
         Assert.Equal(new CodeFact(CodeSystems.Loinc, "2703-7"), Assert.Single(observation.Own.Codes));
     }
 
+    [Fact]
+    public void Half_a_character_in_a_note_does_not_sink_the_resource() =>
+        Assert.Equal(80, One(Observation(Loinc("2703-7"), Quantity("80", "mm[Hg]"), "\"note\":[{\"text\":\"\\ud83d \\\" { \"}]")).Value);
+
+    [Fact]
+    public void White_space_inside_a_text_is_content() =>
+        Assert.NotEqual(Facts("{\"resourceType\":\"Patient\",\"id\":\"1\",\"x\":\"a\\\"b c\"}").Order.Digest, Facts("{\"resourceType\":\"Patient\",\"id\":\"1\",\"x\":\"a\\\"bc\"}").Order.Digest);
+
     [Theory]
     [InlineData("\"gender\":\"female\"", "female")]
     [InlineData("\"gender\":\"other\"", "unknown")]

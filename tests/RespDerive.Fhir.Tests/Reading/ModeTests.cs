@@ -13,6 +13,7 @@ public class ModeTests
     [Theory]
     [InlineData("Volume Control", "volume control")]
     [InlineData("VC-AC", "volume control")]
+    [InlineData("Volume control (A/C)", "volume control")]
     [InlineData("pressure_control", "pressure control")]
     [InlineData("PC", "pressure control")]
     [InlineData("Pressure  support", "spontaneous")]

@@ -37,6 +37,8 @@ public class TrapTests
         Assert.Contains("DeviceMetric/m1", result.Unresolved);
         Assert.Equal("peep", Assert.Single(result.Readings).Kind.Key);
         Assert.Empty(Read(Observation(Loinc("76531-3"), Quantity("40", "cm[H2O]"))).Readings);
+        Assert.Contains("DeviceMetric/m1", Read(Observation(Loinc("76531-3"), Quantity("40", "cm[H2O]"), OfMetric)).Unresolved);
+        Assert.Empty(Read(Observation(Loinc("8867-4"), Quantity("40", "/min"), OfMetric)).Unresolved);
     }
 
     [Fact]

@@ -32,8 +32,12 @@ public class ValueTests
     [InlineData("cm[H2O]", "76248-4", 8)]
     [InlineData("breaths/min", "19840-8", 18)]
     [InlineData("bpm", "19840-8", 18)]
-    public void Without_a_system_a_ucum_code_or_a_known_spelling_is_taken(string unit, string code, double value) =>
-        Assert.Equal(value, One(Observation(Loinc(code), Unsystematic($"{value}", unit))).Value);
+    public void Without_a_system_a_ucum_code_or_a_known_spelling_is_taken(string unit, string code, double value)
+    {
+        var reading = One(Observation(Loinc(code), Unsystematic($"{value}", unit)));
+
+        Assert.Equal((value, unit), (reading.Value, reading.GivenUnit));
+    }
 
     [Theory]
     [InlineData("torr")]
