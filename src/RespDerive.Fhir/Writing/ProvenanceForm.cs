@@ -38,7 +38,8 @@ internal sealed class ProvenanceForm(RenderOptions options, Vocabulary words, Re
             provenance.PolicyElement.Add(new FhirUri($"{words.Policy}|{outcome.Policy}"));
         }
 
-        provenance.AddExtension(words.ProvenanceId, new Uuid($"urn:uuid:{id}"));
+        // A uri, since not every server takes its own kind of uuid.
+        provenance.AddExtension(words.ProvenanceId, new FhirUri($"urn:uuid:{id}"));
         provenance.AddExtension(words.ContentDigest, new FhirString(digest));
         if (edition is { IsRetraction: true, Withheld: { } code })
         {

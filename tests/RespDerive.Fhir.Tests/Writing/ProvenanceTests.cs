@@ -99,16 +99,20 @@ public sealed class ProvenanceTests
     [Fact]
     public void The_id_is_the_same_for_a_resend_and_another_for_other_content()
     {
-        static string Id(Outcome outcome, Edition edition) => ((Uuid)Rendered(outcome, edition).GetExtension(Words.ProvenanceId)!.Value!).Value!;
+        static string Id(Outcome outcome, Edition edition) => ((FhirUri)Rendered(outcome, edition).GetExtension(Words.ProvenanceId)!.Value!).Value!;
         Assert.Equal(Id(Samples.PfRatio, Samples.First), Id(Samples.PfRatio, Samples.First));
         Assert.NotEqual(Id(Samples.PfRatio, Samples.First), Id(Samples.PfRatio, Samples.Second with { Recorded = Samples.Recorded, Status = EditionStatus.Final }));
         Assert.NotEqual(Id(Samples.PfRatio, Samples.First), Id(Samples.PfRatio with { Published = 146m }, Samples.First));
     }
 
     [Fact]
+    public void A_resend_can_look_for_the_id() =>
+        Assert.Equal(Samples.Renderer().ProvenanceId(Samples.PfRatio, Samples.First), ((FhirUri)Rendered(Samples.PfRatio).GetExtension(Words.ProvenanceId)!.Value!).Value);
+
+    [Fact]
     public void With_our_own_ids_the_id_is_the_resource_id()
     {
         var provenance = Rendered(Samples.PfRatio, null, options => options with { UsePutIds = true });
-        Assert.Equal("urn:uuid:" + provenance.Id, ((Uuid)provenance.GetExtension(Words.ProvenanceId)!.Value!).Value);
+        Assert.Equal("urn:uuid:" + provenance.Id, ((FhirUri)provenance.GetExtension(Words.ProvenanceId)!.Value!).Value);
     }
 }
