@@ -98,6 +98,29 @@ public sealed partial class FhirServer
         return found;
     }
 
+    /// <summary>The Provenance of a target that carries our id of it, so that a resend does not add a second one; null when there is none.</summary>
+    /// <param name="target"><c>Observation/id</c>.</param>
+    /// <param name="extension">URL of the extension that holds our id.</param>
+    /// <param name="id">The id, <c>urn:uuid:…</c>.</param>
+    /// <param name="cancel">Cancels.</param>
+    /// <exception cref="SearchFailedException">The search failed.</exception>
+    public async Task<ServerAnswer.Delivered?> FindProvenanceAsync(string target, string extension, string id, CancellationToken cancel = default)
+    {
+        await foreach (var page in SearchAsync($"Provenance?target={Uri.EscapeDataString(target)}", cancel))
+        {
+            foreach (var entry in page.Entries)
+            {
+                using var json = JsonDocument.Parse(entry.Resource);
+                if (json.RootElement.Items("extension").Any(item => item.Text("url") == extension && item.Text("valueString") == id))
+                {
+                    return Landing.Of(json.RootElement, "Provenance", null, null);
+                }
+            }
+        }
+
+        return null;
+    }
+
     /// <summary>Creates a resource; with <paramref name="ifNoneExist"/> (query part only) unless one matches.</summary>
     public async Task<ServerAnswer> CreateAsync(Resource resource, string? ifNoneExist = null, CancellationToken cancel = default)
     {

@@ -35,6 +35,6 @@ internal sealed partial record OutcomeIssue(string Code, string? Place)
     private static partial Regex Word();
 
     /// <summary>Element names and indexes only; a longer expression could hold a value.</summary>
-    [GeneratedRegex(@"^[A-Z][A-Za-z]{1,40}(\.[a-z][A-Za-z]{0,40}(\[\d{1,3}\])?){0,8}$")]
+    [GeneratedRegex(@"^[A-Z][A-Za-z]{1,40}(\.[a-z][A-Za-z]{0,40}(\[(\d{1,3}|x)\])?){0,8}$")]
     private static partial Regex Path();
 }

@@ -81,7 +81,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
     }
 
     /// <summary>The anchor's string as sent; where that is no FHIR dateTime (no zone, a blank for the T), the event time it was read as.</summary>
-    private static string Effective(Outcome outcome) => FhirDateTime.IsValidValue(outcome.AtText)
+    public static string Effective(Outcome outcome) => FhirDateTime.IsValidValue(outcome.AtText)
         ? outcome.AtText
         : outcome.At.ToString("yyyy-MM-dd'T'HH:mm:ss.FFFFFFFzzz", CultureInfo.InvariantCulture);
 

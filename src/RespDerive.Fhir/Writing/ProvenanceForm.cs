@@ -17,7 +17,7 @@ internal sealed class ProvenanceForm(RenderOptions options, Vocabulary words, Re
         {
             Id = options.UsePutIds ? id.ToString() : null,
             Target = [new ResourceReference(target) { Extension = [new Extension(words.ResultRevision, new PositiveInt(edition.Revision))] }],
-            Occurred = new FhirDateTime(outcome.AtText),
+            Occurred = new FhirDateTime(ObservationForm.Effective(outcome)),
             Recorded = edition.Recorded,
             Policy = [$"{words.Definition(definition.Key)}|{outcome.Revision.ToString(CultureInfo.InvariantCulture)}"],
             Activity = Activity(edition),

@@ -16,9 +16,10 @@ internal sealed class TransactionForm(RenderOptions options, Vocabulary words, E
 
     public Bundle Of(Observation observation, Provenance provenance, Device? device, IReadOnlyList<Library> first)
     {
-        if (edition.Revision > 1 && !options.UsePutIds && (edition.ServerId is null || edition.PreviousVersion is null))
+        // Without the version we wrote last, an update would overwrite what a person changed.
+        if (edition.Revision > 1 && (edition.PreviousVersion is null || (edition.ServerId is null && !options.UsePutIds)))
         {
-            throw new ArgumentException("A later edition needs the server's id and version of the one before.");
+            throw new ArgumentException("A later edition needs the server's version, and id unless ours, of the one before.");
         }
 
         var entries = new List<Bundle.EntryComponent> { Observation(observation), Provenance(provenance) };

@@ -49,9 +49,9 @@ public sealed class DeliveryVerdictTests
             {"resourceType":"OperationOutcome","issue":[
               {"severity":"warning","code":"informational","diagnostics":"Ada"},
               {"severity":"error","code":"business-rule","diagnostics":"Patient Ada Example has died","details":{"text":"Ada Example"},"expression":["Observation.where(id='Ada')"],"location":["Observation.subject"]},
-              {"severity":"fatal","code":"Ada Example!","expression":["Observation.component[2].valueQuantity"]}]}
+              {"severity":"fatal","code":"Ada Example!","expression":["Observation.component[2].value[x]"]}]}
             """;
-        Assert.Equal(new ServerAnswer.Parked("business-rule", "HTTP 422: business-rule at Observation.subject; unspecified at Observation.component[2].valueQuantity"), Of(422, outcome));
+        Assert.Equal(new ServerAnswer.Parked("business-rule", "HTTP 422: business-rule at Observation.subject; unspecified at Observation.component[2].value[x]"), Of(422, outcome));
     }
 
     [Fact]

@@ -39,6 +39,17 @@ public sealed class SearchTests : IDisposable
         Assert.Empty(other.Requests);
     }
 
+    [Theory]
+    [InlineData("/admin/Observation?page=2")]
+    [InlineData("/fhirther/Observation?page=2")]
+    [InlineData("/fhir/../admin?page=2")]
+    public async Task A_next_link_beside_the_base_is_refused_too(string path)
+    {
+        _peer.Answer("GET", "/fhir/Observation", 200, Peer.Searchset(Peer.Entry("a"), _peer.Wire.Url + path));
+        Assert.Equal("foreign-link", Assert.IsType<ServerAnswer.Parked>(await Failure("Observation?code=x")).Code);
+        Assert.Single(_peer.Requests);
+    }
+
     [Fact]
     public async Task A_circle_of_next_links_ends()
     {
@@ -80,5 +91,18 @@ public sealed class SearchTests : IDisposable
     {
         _peer.Page("identifier", "https://r.example/result|abc", Peer.Searchset(Peer.Entry("a", "3") + "," + Peer.Entry("b")));
         Assert.Equal([new("a", "3"), new("b", "1")], await _peer.Fhir.FindAsync("Observation", "https://r.example/result", "abc", TestContext.Current.CancellationToken));
+    }
+
+    [Fact]
+    public async Task A_Provenance_already_there_is_found_by_our_id_of_it()
+    {
+        const string url = "https://r.example/provenance-id";
+        _peer.Answer("GET", "/fhir/Provenance", 200, Peer.Searchset($$$"""
+            {"resource":{"resourceType":"Provenance","id":"p1","extension":[{"url":"{{{url}}}","valueString":"urn:uuid:1"}]}},
+            {"resource":{"resourceType":"Provenance","id":"p2","extension":[{"url":"other","valueString":"urn:uuid:2"},{"url":"{{{url}}}","valueString":"urn:uuid:2"}]}}
+            """));
+        Assert.Equal("p2", (await _peer.Fhir.FindProvenanceAsync("Observation/1", url, "urn:uuid:2", TestContext.Current.CancellationToken))?.Id);
+        Assert.Null(await _peer.Fhir.FindProvenanceAsync("Observation/1", url, "urn:uuid:3", TestContext.Current.CancellationToken));
+        Assert.Equal("Observation/1", _peer.Requests.First().Query!["target"][0]);
     }
 }

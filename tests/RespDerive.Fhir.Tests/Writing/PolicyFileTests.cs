@@ -106,6 +106,9 @@ public sealed class PolicyFileTests
         var example = page[(page.IndexOf("```json", StringComparison.Ordinal) + 7)..];
         var book = Read(example[..example.IndexOf("```", StringComparison.Ordinal)]);
         Assert.Equal(2, book.All.Count);
+        Assert.Equal((520d, null), (book.All[0].AltitudeMetres, book.All[0].PressureMmHg));
+        Assert.Null(book.All[1].AltitudeMetres);
+        Assert.Equal(715.56, book.All[1].PressureMmHg!.Value, 0.01); // 95.4 kPa / 0.133322
         Assert.Equal(12, book.All[0].TimingOf("ehr").SettingMaxAge.TotalHours);
     }
 

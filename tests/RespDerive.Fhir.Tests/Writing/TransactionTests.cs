@@ -33,8 +33,12 @@ public sealed class TransactionTests
     }
 
     [Fact]
-    public void A_later_edition_without_the_version_before_is_refused() =>
+    public void A_later_edition_without_the_version_before_is_refused()
+    {
         Assert.Throws<ArgumentException>(() => Rendered(Samples.Second with { PreviousVersion = null }));
+        Assert.Throws<ArgumentException>(() => Rendered(Samples.Second with { PreviousVersion = null }, options => options with { UsePutIds = true }));
+        Assert.Throws<ArgumentException>(() => Rendered(Samples.Second with { ServerId = null }));
+    }
 
     [Fact]
     public void With_our_own_ids_everything_is_put()

@@ -53,8 +53,32 @@ public sealed class ValidityTests(R4Validation r4)
     [Fact]
     public void The_validator_does_refuse_what_is_not_R4()
     {
-        var wrong = Samples.Renderer().Observation(Samples.PfRatio, Samples.First);
-        wrong.DataAbsentReason = new CodeableConcept(Vocabulary.Ucum, "error");
-        Assert.ThrowsAny<Exception>(() => r4.Accepts(wrong));
+        // Invariant obs-6: no dataAbsentReason beside a value.
+        var both = Samples.Renderer().Observation(Samples.PfRatio, Samples.First);
+        both.DataAbsentReason = new CodeableConcept("http://terminology.hl7.org/CodeSystem/data-absent-reason", "error", "Error", null);
+        Assert.Contains("obs-6", Assert.ThrowsAny<Exception>(() => r4.Accepts(both)).Message, StringComparison.Ordinal);
     }
+
+    /// <summary>The validator does not look at displays, so they are compared with the code systems published with R4.</summary>
+    [Fact]
+    public async System.Threading.Tasks.Task Standard_codes_have_the_display_of_their_code_system()
+    {
+        var renderer = Samples.Renderer(options => options with { ProcedureCategory = true });
+        Edition[] editions = [Samples.First, Samples.Second, Samples.Retraction];
+        Resource[] written = [renderer.Policy(Samples.Policy), renderer.Definition(Catalogue.Shipped.All[0]), .. editions.Select(edition => renderer.Transaction(Samples.PfRatio, edition))];
+        var codings = written.SelectMany(Codings).Where(coding => coding.System.StartsWith("http://terminology.hl7.org/", StringComparison.Ordinal)).ToList();
+        Assert.Equal(5, codings.Select(coding => coding.System).Distinct().Count());
+        foreach (var coding in codings)
+        {
+            Assert.Equal(await r4.DisplayAsync(coding.System, coding.Code), coding.Display);
+        }
+    }
+
+    private static IEnumerable<Coding> Codings(Base element) =>
+        element is Coding coding ? [coding] : element.EnumerateElements().Select(member => member.Value).SelectMany(value => value switch
+        {
+            Base one => Codings(one),
+            System.Collections.IEnumerable many and not string => many.OfType<Base>().SelectMany(Codings),
+            _ => [],
+        });
 }
