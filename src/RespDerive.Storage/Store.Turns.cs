@@ -38,8 +38,14 @@ public sealed partial class Store
     public IReadOnlyList<long> PatientsWithOpenRows(int limit) => _readers.Read(session => session.All(Sql.OpenPatients, row => row.GetInt64(0), limit));
 
     /// <summary>Commits a turn whole or not at all.</summary>
+    /// <param name="patient">Number of the patient.</param>
+    /// <param name="turn">Number of the turn, from <see cref="OpenTurn"/>.</param>
+    /// <param name="upTo">Mark up to which it has read, from <see cref="OpenTurn"/>.</param>
+    /// <param name="changes">What it changes.</param>
+    /// <param name="now">Time of the commit; deliveries are due from then on.</param>
+    /// <param name="due">Times at which something of it has to be looked at again.</param>
     /// <returns>False when the turn number is taken: nothing was written; open the turn again.</returns>
-    public Task<bool> CommitTurnAsync(long patient, long turn, long upTo, TurnChanges changes, DateTimeOffset now)
+    public Task<bool> CommitTurnAsync(long patient, long turn, long upTo, TurnChanges changes, DateTimeOffset now, IReadOnlyList<DueItem>? due = null)
     {
         ArgumentNullException.ThrowIfNull(changes);
         var replaced = changes.Replaced.ToHashSet();
@@ -69,6 +75,11 @@ public sealed partial class Store
                 foreach (var (change, body) in outcomes)
                 {
                     SetOutcome(session, patient, change, body, now);
+                }
+
+                foreach (var item in due ?? [])
+                {
+                    session.Execute(Sql.SetDue, item.Purpose, item.Key, item.At.UtcTicks);
                 }
 
                 session.Execute(Sql.CloseUpTo, patient, upTo);

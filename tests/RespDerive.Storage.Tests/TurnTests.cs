@@ -122,6 +122,20 @@ public sealed class TurnTests
     }
 
     [Fact]
+    public async Task Due_times_of_a_turn_are_set_with_it_and_not_by_the_one_that_lost()
+    {
+        await using var temporary = new TemporaryStore();
+        var patient = await temporary.PatientAsync();
+        Task<bool> Commit(string key) =>
+            temporary.Store.CommitTurnAsync(patient, 1, 0, new TurnChanges(), Some.At(0), [new DueItem("settle", key, Some.At(15))]);
+
+        Assert.True(await Commit("won"));
+        Assert.False(await Commit("lost"));
+
+        Assert.Equal("won", Assert.Single(temporary.Store.DueItems(Some.At(15), 10)).Key);
+    }
+
+    [Fact]
     public async Task The_person_is_kept_until_changed()
     {
         await using var temporary = new TemporaryStore();

@@ -16,14 +16,16 @@ internal sealed class Readers(string path) : IDisposable
     public Session Take()
     {
         _free.Wait();
+        Session? session = null;
         try
         {
-            var session = _idle.TryTake(out var idle) ? idle : Session.Open(path, readOnly: true);
+            session = _idle.TryTake(out var idle) ? idle : Session.Open(path, readOnly: true);
             session.Execute(Sql.BeginRead);
             return session;
         }
         catch
         {
+            session?.Dispose();
             _free.Release();
             throw;
         }

@@ -17,6 +17,7 @@ internal sealed class Writer : IAsyncDisposable
     private readonly Channel<Work> _waiting = Channel.CreateBounded<Work>(new BoundedChannelOptions(2048) { SingleReader = true });
     private readonly TaskCompletionSource<StoreException> _failed = new(TaskCreationOptions.RunContinuationsAsynchronously);
     private readonly Task _loop;
+    private volatile StoreException? _failure;
 
     public Writer(Session session)
     {
@@ -28,7 +29,7 @@ internal sealed class Writer : IAsyncDisposable
     public Task<StoreException> WhenFailed => _failed.Task;
 
     /// <summary>Why the writer has stopped; null while it works.</summary>
-    public StoreException? Failure { get; private set; }
+    public StoreException? Failure => _failure;
 
     /// <summary>Runs an action in the next transaction; completes when that is durable.</summary>
     /// <param name="action">What to write; may be rolled back alone.</param>
@@ -142,7 +143,7 @@ internal sealed class Writer : IAsyncDisposable
     private void Stop(List<Work> batch, Exception problem)
     {
         var failure = new StoreException(StoreException.Failed, $"a write failed and the store has stopped: {problem.Message}", problem);
-        Failure = failure;
+        _failure = failure;
         try
         {
             _session.Execute(Sql.Rollback);
