@@ -56,7 +56,7 @@ public sealed class RecordsTests
     [InlineData(typeof(ReadingId), "Resource Part")]
     [InlineData(typeof(ResourceKey), "Source Type Id")]
     [InlineData(typeof(Person), "Resource Version Sex BirthDate Base")]
-    [InlineData(typeof(Outcome), "Identity Definition Revision Source Patient Encounter Anchor AnchorReference At AtText Value Published Unit Uncertainty SiteTolerance SharedOffsetShare Code Flags Variant Inputs Person Intermediates Preliminary InputCorrected Withheld Considered Policy")]
+    [InlineData(typeof(Outcome), "Identity Definition Revision Source Patient Encounter Anchor AnchorReference At AtText Value Published Unit Uncertainty SiteTolerance SharedOffsetShare Code Flags Variant Inputs Person Intermediates Preliminary InputCorrected Withheld Policy")]
     [InlineData(typeof(UsedReading), "Resource Part Version Base At Value")]
     [InlineData(typeof(UsedInput), "Kind Value Unit Code Readings GapMinutes Share Assumed GateOnly")]
     [InlineData(typeof(Intermediate), "Definition Value Unit")]

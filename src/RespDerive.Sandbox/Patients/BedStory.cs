@@ -35,7 +35,7 @@ internal sealed class BedStory
         _bed = new Bed(number, _profile);
         _chart = new Chart(_bed);
         _staff = new Staff(_profile, _dice);
-        _streams = new Streams(_chart, _profile.Units, _dice);
+        _streams = new Streams(_chart, _profile.Units, _dice, _profile.MeasuresOxygen);
         _holds = new Holds(_chart, _profile, number, _dice);
         _gases = new BloodGases(_chart, _profile, number, _dice);
         _set = _profile.Start;

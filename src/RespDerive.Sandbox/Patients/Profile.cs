@@ -36,6 +36,9 @@ internal sealed record Profile
     /// <summary>How the results of one sample are held together.</summary>
     public Grouping Grouping { get; init; }
 
+    /// <summary>The ventilator has an oxygen cell and streams what it measures; without, only the setting tells FiO2.</summary>
+    public bool MeasuresOxygen { get; init; } = true;
+
     /// <summary>Holds are sent by the ventilator itself, not written down by a person.</summary>
     public bool HoldsFromDevice { get; init; }
 }

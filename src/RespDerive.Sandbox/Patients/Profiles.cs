@@ -18,6 +18,7 @@ internal static class Profiles
         Height = 178,
         Units = new Units("mm[Hg]", "cm[H2O]", FractionAsOne: false, VolumeInLitres: false),
         SpO2Target = (0.90, 0.95),
+        MeasuresOxygen = false,
         Grouping = Grouping.Report,
         Start = new Ventilation(BreathMode.VolumeControlled) { TidalVolume = 0.44, Flow = 1.0, Rate = 24, Peep = 12, FiO2 = 0.60 },
         Plan =

@@ -16,8 +16,7 @@ internal sealed class Records(Func<string, Kind?> kinds)
 
     public byte[] Bytes(Person person) => JsonSerializer.SerializeToUtf8Bytes(person, _json.Person);
 
-    /// <summary>Candidates are left out: they are told on demand, the core being pure.</summary>
-    public byte[] Bytes(Outcome outcome) => JsonSerializer.SerializeToUtf8Bytes(outcome with { Considered = [] }, _json.Outcome);
+    public byte[] Bytes(Outcome outcome) => JsonSerializer.SerializeToUtf8Bytes(outcome, _json.Outcome);
 
     public Reading Reading(byte[] bytes) => JsonSerializer.Deserialize(bytes, _json.Reading)!;
 

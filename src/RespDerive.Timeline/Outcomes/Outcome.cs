@@ -1,3 +1,5 @@
+using System.Text.Json.Serialization;
+
 namespace RespDerive.Timeline;
 
 /// <summary>A reading, in one version, that a result rests on or that a gate looked at.</summary>
@@ -119,9 +121,11 @@ public sealed record Outcome
     public string? Withheld { get; init; }
 
     /// <summary>What is missing, in words; told only when asked for, never stored.</summary>
+    [JsonIgnore]
     public IReadOnlyList<string> Missing { get; init; } = [];
 
     /// <summary>Candidates looked at and why each was not used; told only when asked for, never stored.</summary>
+    [JsonIgnore]
     public IReadOnlyList<Candidate> Considered { get; init; } = [];
 
     /// <summary>Hash of the policy in force.</summary>

@@ -18,6 +18,9 @@ internal sealed class DemoRun : IAsyncDisposable
     /// <summary>Pressure at the invented ward, which lies at sea level.</summary>
     private const double Barometer = 760;
 
+    /// <summary>The ward's ventilators send a setting when it changes, not again and again.</summary>
+    private static readonly Dictionary<string, SourceTiming> OnChange = new() { [new SourceOptions().Name] = new() { SettingMaxAge = TimeSpan.FromHours(24) } };
+
     private static readonly TimeSpan Longest = TimeSpan.FromHours(24);
     private static readonly TimeSpan Drain = TimeSpan.FromSeconds(20);
     private readonly DirectoryInfo _folder;
@@ -63,7 +66,7 @@ internal sealed class DemoRun : IAsyncDisposable
             ["RespDerive:Delivery:PublishHistory"] = "true",
         });
         builder.WebHost.UseSetting("urls", address);
-        var service = ServiceHost.Build(builder, new PolicyBook(PolicyDocument.WithHash(new Policy { PressureMmHg = Barometer })));
+        var service = ServiceHost.Build(builder, new PolicyBook(PolicyDocument.WithHash(new Policy { PressureMmHg = Barometer, Sources = OnChange })));
         var feed = service.Services.GetRequiredService<Feed>();
         feed.OnTurn += screen.Turned;
         feed.OnDelivered += screen.Delivered;

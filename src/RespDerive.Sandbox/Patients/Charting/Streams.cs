@@ -4,7 +4,7 @@ using RespDerive.Sandbox.Patients.Lung;
 namespace RespDerive.Sandbox.Patients.Charting;
 
 /// <summary>What comes from the devices by itself: settings when they change, measurements every minute.</summary>
-internal sealed class Streams(Chart chart, Units units, Dice dice)
+internal sealed class Streams(Chart chart, Units units, Dice dice, bool measuresOxygen)
 {
     private Ventilation? _sent;
 
@@ -68,7 +68,11 @@ internal sealed class Streams(Chart chart, Units units, Dice dice)
         Measured("peak", Codes.Peak, units.Pressure(with.Pressure(breath.Peak)), bed.Ventilator);
         Measured("mean", Codes.Mean, units.Pressure(with.Pressure(breath.Mean)), bed.Ventilator);
         Measured("peep", Codes.Peep, units.Pressure(with.Pressure(now.Set.Peep)), bed.PeepMetric);
-        Measured("fio2", units.FractionAsOne ? Codes.FiO2Fraction : Codes.FiO2Percent, units.FractionAsOne ? Units.Quantity(fio2, 3, "1") : Units.Quantity(fio2 * 100, 1, "%"), bed.Ventilator);
+        if (measuresOxygen)
+        {
+            Measured("fio2", units.FractionAsOne ? Codes.FiO2Fraction : Codes.FiO2Percent, units.FractionAsOne ? Units.Quantity(fio2, 3, "1") : Units.Quantity(fio2 * 100, 1, "%"), bed.Ventilator);
+        }
+
         SpO2 = with.SpO2(now.Gas.SaO2);
         var observation = bed.SpO2(chart.NextId("spo2"), at, SpO2.Value);
         chart.File(WardEventKind.Measurement, at, filed, Codes.SpO2, observation);
