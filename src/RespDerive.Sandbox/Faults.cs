@@ -22,7 +22,7 @@ public sealed class Faults
         set { lock (_gate) { _delay = value; } }
     }
 
-    /// <summary>Searches see the store as it was this long ago; reads by id are not affected.</summary>
+    /// <summary>Searches see the store as it was this long ago; reads by id and conditions of writes are not affected.</summary>
     public TimeSpan SearchStaleness
     {
         get { lock (_gate) { return _staleness; } }

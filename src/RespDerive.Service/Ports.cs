@@ -3,7 +3,8 @@ using System.Net.Sockets;
 
 namespace RespDerive.Service;
 
-internal static class Ports
+/// <summary>Ports for parts of one process.</summary>
+public static class Ports
 {
     /// <summary>A port of the loopback address that is free now.</summary>
     public static int Free()

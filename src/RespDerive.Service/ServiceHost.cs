@@ -67,6 +67,13 @@ public static class ServiceHost
         await app.StartAsync(cancel);
     }
 
+    /// <summary>True once every criterion has its subscription at the source.</summary>
+    public static bool IsSubscribed(WebApplication app)
+    {
+        ArgumentNullException.ThrowIfNull(app);
+        return app.Services.GetRequiredService<SubscriptionKeeper>().Kept;
+    }
+
     /// <summary>The options, checked.</summary>
     /// <exception cref="OptionsValidationException">All errors, also of unknown keys.</exception>
     public static ServiceOptions Options(IConfiguration configuration)

@@ -31,9 +31,14 @@ internal static class Program
     {
         var root = new RootCommand("Derived respiratory values: computed once, correctly paired, with their evidence.\nA derived number is arithmetic on the values given; it is not a diagnosis, an alarm or an order.");
         root.Subcommands.Add(CatalogueCommand.Create());
+        root.Subcommands.Add(CheckCommand.Create());
         root.Subcommands.Add(ComputeCommand.Create());
+        root.Subcommands.Add(DemoCommand.Create());
+        root.Subcommands.Add(DeriveCommand.Create());
+        root.Subcommands.Add(ServeCommand.Create());
         Examples.Add(root, """
             Examples:
+              respderive demo --seconds 60
               respderive catalogue
               respderive compute pf-ratio "pao2=90 mm[Hg]" fio2=0.40
               respderive compute --help

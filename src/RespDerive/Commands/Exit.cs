@@ -11,6 +11,9 @@ internal static class Exit
     /// <summary>The command line or the configuration is wrong.</summary>
     public const int Usage = 2;
 
+    /// <summary>Something around the program, such as the disk, does not allow it to run.</summary>
+    public const int Environment = 3;
+
     /// <summary>Some of the data read cannot be used.</summary>
     public const int Data = 5;
 }

@@ -6,7 +6,7 @@ namespace RespDerive.Sandbox.Tests.Patients;
 public sealed class InstrumentTests
 {
     private static readonly DateTimeOffset s_from = new(2026, 1, 2, 6, 0, 0, TimeSpan.Zero);
-    private static readonly Scenario[] s_wards = [.. Enumerable.Range(1, 16).Select(seed => Scenario.Play(seed, s_from, TimeSpan.FromHours(5)))];
+    private static readonly Scenario[] s_wards = [.. Enumerable.Range(1, 12).Select(seed => Scenario.Play(seed, s_from, TimeSpan.FromHours(5)))];
 
     // Limits of ISO 80601-2-12 and ISO 80601-2-55, from memory; half a last digit is added for rounding.
     [Theory]
@@ -32,9 +32,9 @@ public sealed class InstrumentTests
     public void Gas_results_scatter_as_stated(string loinc, double relative)
     {
         var z = Pairs(loinc).Select(p => (p.Read - p.True) / Math.Max(loinc == "2019-8" ? 1 : 0, relative * p.True)).ToList();
-        Assert.True(z.Count > 40);
-        Assert.InRange(z.Average(), -0.4, 0.4);
-        Assert.InRange(Math.Sqrt(z.Average(x => x * x)), 0.75, 1.25);
+        Assert.True(z.Count > 30);
+        Assert.InRange(z.Average(), -0.45, 0.45);
+        Assert.InRange(Math.Sqrt(z.Average(x => x * x)), 0.7, 1.3);
     }
 
     // Plateau and total PEEP of one hold share the transducer's zero: it cancels in their difference.

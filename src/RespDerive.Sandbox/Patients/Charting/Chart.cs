@@ -25,7 +25,8 @@ internal sealed class Chart(Bed bed)
     public void File(WardEventKind kind, DateTimeOffset at, DateTimeOffset filed, Code code, JsonObject observation, string note = "")
     {
         var quantity = observation["valueQuantity"];
-        File(kind, at, filed, observation, quantity is null ? code.Short : $"{code.Short} {quantity["value"]!.ToJsonString()} {quantity["unit"]}{note}");
+        var unit = quantity?["unit"]?.GetValue<string>() is { } text and not "1" ? " " + text : "";
+        File(kind, at, filed, observation, quantity is null ? code.Short : $"{code.Short} {quantity["value"]!.ToJsonString()}{unit}{note}");
     }
 
     /// <summary>The same resource with another value: status corrected.</summary>
