@@ -16,7 +16,7 @@ for argument in "$@"; do
     esac
 done
 
-export DOTNET_CLI_TELEMETRY_OPTOUT=1 DOTNET_NOLOGO=1 DOTNET_CLI_UI_LANGUAGE=en NO_COLOR=1
+export DOTNET_CLI_TELEMETRY_OPTOUT=1 DOTNET_NOLOGO=1 MSBUILDDISABLENODEREUSE=1 DOTNET_CLI_UI_LANGUAGE=en NO_COLOR=1
 # Test programs are started by themselves, so they must find the runtime that the SDK brings.
 if [ -z "${DOTNET_ROOT:-}" ] && command -v dotnet > /dev/null; then
     DOTNET_ROOT=$(dirname "$(readlink -f "$(command -v dotnet)")")
