@@ -87,7 +87,12 @@ run_project() {
     passed=$((passed + good))
     failed=$((failed + bad))
     skipped=$((skipped + left))
-    printf '  %-34s %5d passed, %d failed, %d skipped\n' "$name" "$good" "$bad" "$left"
+    local note=""
+    if [ "$total" -eq 0 ]; then
+        note="  (it has no tests)"
+    fi
+
+    printf '  %-34s %5d passed, %d failed, %d skipped%s\n' "$name" "$good" "$bad" "$left" "$note"
 }
 
 # What the tier took against what it may take; told, not enforced: machines differ.
