@@ -32,8 +32,8 @@ COPY --from=build /usr/share/zoneinfo /usr/share/zoneinfo
 COPY --from=build /out ./
 COPY LICENSE NOTICE ./
 
-# The store. A volume made from the image takes over this owner; elsewhere the user needs write access.
-COPY --from=build --chown=$APP_UID:$APP_UID /empty /data
+# The store. A volume made from the image takes over this owner, the base's APP_UID; elsewhere that user needs write access.
+COPY --from=build --chown=1654:1654 /empty /data
 VOLUME /data
 
 ENV ASPNETCORE_HTTP_PORTS=8080 \
