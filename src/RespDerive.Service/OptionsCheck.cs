@@ -51,6 +51,11 @@ public sealed class OptionsCheck : IValidateOptions<ServiceOptions>
             yield return "RespDerive:Intake:PollEvery, Overlap and FirstLookBack must not be negative, for example 00:01:00.";
         }
 
+        if (options.Intake.PollEvery > TimeSpan.FromDays(1) || options.Intake.Overlap > TimeSpan.FromDays(1) || options.Intake.FirstLookBack > TimeSpan.FromDays(31))
+        {
+            yield return "RespDerive:Intake:PollEvery and Overlap must be at most 1 day, FirstLookBack at most 31 days; 48 hours are written 2.00:00:00.";
+        }
+
         if (!options.Intake.Subscribe && options.Intake.PollEvery == TimeSpan.Zero)
         {
             yield return "RespDerive:Intake has neither Subscribe nor PollEvery: only what is posted to /notify would come in, and lost notifications would stay lost.";

@@ -43,7 +43,8 @@ public static class ServiceHost
         services.AddSingleton<Feed>();
         var site = new Site(options, Catalogue.Shipped, policies);
         services.AddSingleton(site);
-        services.AddSingleton(Store.Open(Path.GetFullPath(options.Store), site.KindOf));
+        var store = Store.Open(Path.GetFullPath(options.Store), site.KindOf);
+        services.AddSingleton(_ => store); // by a factory, so that the container closes it
         AddIntake(services);
         services.AddSingleton<PatientTurn>();
         services.AddSingleton<Target>();

@@ -77,5 +77,5 @@ public sealed class ConfluenceTests
         .OrderBy(outcome => outcome.Identity)
         .Select(outcome => $"{outcome.Definition} {outcome.AnchorReference} {outcome.AtText} {outcome.Withheld} {outcome.Value} {outcome.Published} ±{outcome.Uncertainty} "
             + $"[{string.Join(',', outcome.Flags)}] {(outcome.Withheld is null ? $"{outcome.Preliminary} {outcome.Variant} {outcome.Person?.Version}" : "")} "
-            + (outcome.Withheld is null ? string.Join(' ', outcome.Inputs.Select(input => $"{input.Kind}={input.Value}:{string.Join('+', input.Readings.Select(reading => reading.Resource.Id + "v" + reading.Version))}")) : "")));
+            + (outcome.Withheld is null ? string.Join(' ', outcome.Inputs.Where(input => !input.GateOnly).Select(input => $"{input.Kind}={input.Value}:{string.Join('+', input.Readings.Select(reading => reading.Resource.Id + "v" + reading.Version))}")) : "")));
 }

@@ -7,7 +7,7 @@ using RespDerive.Storage;
 namespace RespDerive.Service.Operations;
 
 /// <summary>
-/// Health for an orchestrator. Live: the process answers. Startup and ready: the store works and the criteria were read once.
+/// Health for an orchestrator. Live: the process answers. Startup and ready: the store works; whether the criteria were read once is told beside.
 /// A FHIR server that is down leaves the service ready: what comes in is kept, what goes out waits.
 /// </summary>
 internal static class Health

@@ -27,9 +27,12 @@ public static class OutcomeComparison
         && a.Variant == b.Variant
         && Equals(a.Person, b.Person)
         && a.Flags.SequenceEqual(b.Flags, StringComparer.Ordinal)
-        && a.Inputs.Count == b.Inputs.Count
-        && a.Inputs.Zip(b.Inputs).All(pair => SameInput(pair.First, pair.Second));
+        && Roots(a).SequenceEqual(Roots(b), SameInput);
 
-    private static bool SameInput(UsedInput a, UsedInput b) =>
-        a.Kind == b.Kind && a.Value.Equals(b.Value) && a.GateOnly == b.GateOnly && a.Assumed == b.Assumed && a.Readings.SequenceEqual(b.Readings);
+    /// <summary>What the number rests on; what only a gate looked at may change with every reading of a stream, and says nothing while the gate's answer stays.</summary>
+    private static IEnumerable<UsedInput> Roots(Outcome outcome) => outcome.Inputs.Where(input => !input.GateOnly);
+
+    private static readonly IEqualityComparer<UsedInput> SameInput = EqualityComparer<UsedInput>.Create(
+        (a, b) => a!.Kind == b!.Kind && a.Value.Equals(b.Value) && a.Assumed == b.Assumed && a.Readings.SequenceEqual(b.Readings),
+        input => HashCode.Combine(input.Kind, input.Value));
 }
