@@ -113,6 +113,7 @@ public static class ServiceHost
         services.AddSingleton<SourceServer>();
         services.AddSingleton<Ingest>();
         services.AddSingleton<Searches>();
+        services.AddSingleton<Disappearances>();
         services.AddSingleton<Webhook>();
         services.AddSingleton(provider => new Lazy<Ingest>(provider.GetRequiredService<Ingest>));
         services.AddSingleton(provider => new Lazy<Searches>(provider.GetRequiredService<Searches>));

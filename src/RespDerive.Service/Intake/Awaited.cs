@@ -7,13 +7,15 @@ using RespDerive.Timeline;
 namespace RespDerive.Service.Intake;
 
 /// <summary>Fetches what was named but not brought: references of readings, and queries after an empty notification.</summary>
-internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ingest, Lazy<Searches> searches, TimeProvider time, ILogger<Awaited> logger)
+internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ingest, Lazy<Searches> searches, Disappearances disappearances, TimeProvider time, ILogger<Awaited> logger)
     : Loop(time, logger)
 {
     /// <summary>Marks a fetch row that is a search to be queried again, not a reference.</summary>
     public const string QueryMark = "?";
 
-    private const int TriesWithoutAnswer = 5;
+    /// <summary>A resource that was never there is given up after so many tries, so that what waits for it goes on without it.</summary>
+    private const int TriesOfTheUnknown = 5;
+
     private static readonly TimeSpan Idle = TimeSpan.FromSeconds(1);
     private readonly TimeProvider _time = time;
 
@@ -63,16 +65,43 @@ internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ing
             await ingest.Value.AcceptAsync([new Brought(answer.Body, $"{source.Base}/{fetch.Target}")]);
             await store.FetchDoneAsync(fetch);
         }
-        else if (answer.Status is 410 || (answer.Status is 404 or 403 && fetch.Tries + 1 >= TriesWithoutAnswer))
+        else if (answer.Status == 410 || (answer.Status is 404 or 403 && store.Find(fetch.Source, fetch.Target) is null && fetch.Tries + 1 >= TriesOfTheUnknown))
         {
-            var parts = fetch.Target.Split('/');
-            await ingest.Value.GoneAsync(new ResourceKey(fetch.Source, parts[0], parts[1]));
-            await store.FetchDoneAsync(fetch);
+            await GoneAsync(fetch);
+        }
+        else if (answer.Status is 404 or 403 && store.Find(fetch.Source, fetch.Target) is { } known)
+        {
+            await VanishedAsync(fetch, known, cancel);
         }
         else
         {
             await AgainAsync(fetch, answer.After);
         }
+    }
+
+    private async Task VanishedAsync(Fetch fetch, ResourceBody known, CancellationToken cancel)
+    {
+        if (Disappearances.IsLast(fetch.Tries) && await RecordIsReadableAsync(known, cancel) && disappearances.Allow(_time.GetUtcNow()))
+        {
+            await GoneAsync(fetch);
+        }
+        else
+        {
+            await store.FetchRetryAsync(fetch.Id, fetch.Tries + 1, _time.GetUtcNow() + Disappearances.BetweenReads);
+        }
+    }
+
+    /// <summary>The control: if not even the patient can be read, the fault is ours or the server's.</summary>
+    private async Task<bool> RecordIsReadableAsync(ResourceBody known, CancellationToken cancel) =>
+        known.Patient is { } patient && patient != known.Key.Reference && CanBeFetched(patient)
+            ? (await source.Server.ReadAsync(patient, cancel)).Found
+            : await source.Server.ProbeAsync(cancel) is not null;
+
+    private async Task GoneAsync(Fetch fetch)
+    {
+        var parts = fetch.Target.Split('/');
+        await ingest.Value.GoneAsync(new ResourceKey(fetch.Source, parts[0], parts[1]));
+        await store.FetchDoneAsync(fetch);
     }
 
     private Task AgainAsync(Fetch fetch, TimeSpan? after) =>

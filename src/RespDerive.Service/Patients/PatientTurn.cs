@@ -1,3 +1,4 @@
+using System.Diagnostics.Metrics;
 using RespDerive.Fhir;
 using RespDerive.Service.Intake;
 using RespDerive.Service.Operations;
@@ -9,6 +10,10 @@ namespace RespDerive.Service.Patients;
 /// <summary>One turn of a patient: read what is open, work out what changes, commit all of it.</summary>
 internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Feed feed, Awaited awaited)
 {
+    private static readonly Counter<long> Ignored = Telemetry.Meter.CreateCounter<long>("respderive.reading.ignored", "{value}", "Values that gave no reading, by reason");
+    private static readonly Counter<long> Refused = Telemetry.Meter.CreateCounter<long>("respderive.reading.refused", "{reading}", "Readings that cannot be used and block their place, by reason");
+    private static readonly Counter<long> Changed = Telemetry.Meter.CreateCounter<long>("respderive.outcomes.changed", "{outcome}", "Outcomes that changed, by definition and what they are now");
+
     /// <summary>True when there is something to read.</summary>
     public bool IsOpen(long patient) => store.OpenTurn(patient, 1) is { UpTo: > 0 };
 
@@ -35,6 +40,11 @@ internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Fee
             return true;
         }
 
+        foreach (var outcome in changes.Outcomes)
+        {
+            Changed.Add(1, new("definition", (outcome.Now ?? outcome.Before)!.Definition), new("became", outcome.Now is null ? "gone" : outcome.Now.Withheld ?? "value"));
+        }
+
         feed.Turned(changes);
         return input.More || IsOpen(patient);
     }
@@ -55,6 +65,7 @@ internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Fee
             }
 
             var read = site.Rules.Read(facts, set);
+            Count(read);
             person = read.Person ?? person;
             var missing = read.Unresolved.Where(reference => !set.IsGone(reference) && awaited.CanBeFetched(reference)).ToArray();
             unresolved.UnionWith(missing);
@@ -69,5 +80,18 @@ internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Fee
         }
 
         return (Turn.Run(site.Evaluator, history, replacements, person), [.. unresolved]);
+    }
+
+    private static void Count(ReadResult read)
+    {
+        foreach (var part in read.Ignored)
+        {
+            Ignored.Add(1, new KeyValuePair<string, object?>("reason", part.Reason));
+        }
+
+        foreach (var reading in read.Readings.Where(reading => reading.Refused is not null))
+        {
+            Refused.Add(1, new KeyValuePair<string, object?>("reason", reading.Refused));
+        }
     }
 }
