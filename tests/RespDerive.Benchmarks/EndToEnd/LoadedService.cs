@@ -52,7 +52,7 @@ internal sealed class LoadedService : IAsyncDisposable
             ["RespDerive:Site"] = "ward-alder",
             ["RespDerive:Store"] = Path.Combine(folder.FullName, "respderive.db"),
             ["RespDerive:Source:Address"] = sandbox.BaseUrl,
-            ["RespDerive:Intake:PollEvery"] = "00:00:00",
+            ["RespDerive:Intake:PollEvery"] = "1.00:00:00",
             ["RespDerive:Delivery:On"] = delivers ? "true" : "false",
             ["RespDerive:Delivery:PublishHistory"] = "true",
         });
