@@ -26,6 +26,8 @@ internal sealed class Day
         var lastGas = messages.Last(message => message.Kind == WardEventKind.BloodGas && message.Type == "Observation").At;
         Minute = Replacements(message => message.Kind == WardEventKind.Measurement && message.At == lastMinute);
         Gas = Replacements(message => message.Kind == WardEventKind.BloodGas && message.At == lastGas);
+        Noon = [.. Replacements(message => message.Kind == WardEventKind.Measurement && (message.At - Ward.Start.AddHours(12)).Duration() < TimeSpan.FromSeconds(30))
+            .Select(replacement => replacement with { Readings = [.. replacement.Readings.Select(reading => reading with { Version = "2", Value = reading.Value * 1.01 })] })];
         var late = Minute.Concat(Gas).Select(replacement => replacement.Resource).ToHashSet();
         Before = new InMemoryHistory();
         Before.Apply(Turn.Run(Ward.Site.Evaluator, Before, [.. _read.Where(entry => !late.Contains(entry.Key)).Select(entry => new Replacement(entry.Key, entry.Value.Readings))],
@@ -46,6 +48,9 @@ internal sealed class Day
 
     /// <summary>The last minute of the devices.</summary>
     public IReadOnlyList<Replacement> Minute { get; }
+
+    /// <summary>A minute of the devices at noon, read again with other values: what a correction or a late batch costs.</summary>
+    public IReadOnlyList<Replacement> Noon { get; }
 
     /// <summary>The last blood gas.</summary>
     public IReadOnlyList<Replacement> Gas { get; }

@@ -25,6 +25,13 @@ public class TurnFromStore
     [Benchmark(Description = "turn, a minute of the devices")]
     public TurnChanges Minute() => _temporary.Work(_patient).Changes;
 
-    [Benchmark(Description = "of it: opening the turn")]
+    [Benchmark(Description = "turn, a minute of the devices corrected 12 h later")]
+    public TurnChanges Late()
+    {
+        using var history = _temporary.Store.History(_patient);
+        return Turn.Run(Ward.Site.Evaluator, history, Day.Made.Noon, null);
+    }
+
+    [Benchmark(Description = "opening a turn, part of each")]
     public TurnInput? Open() => _temporary.Store.OpenTurn(_patient);
 }
