@@ -10,11 +10,11 @@ public class Commit
 {
     private const int Callers = 16;
     private const int Each = 16;
-    private readonly TemporaryStore _temporary = new();
     private readonly long[] _patients = new long[Callers];
     private readonly long[] _turns = new long[Callers];
     private readonly Arrival _sample;
     private readonly TurnChanges _changes;
+    private TemporaryStore _temporary = null!;
     private int _number;
 
     public Commit()
@@ -27,6 +27,7 @@ public class Commit
     [GlobalSetup]
     public async Task SetUpAsync()
     {
+        _temporary = new TemporaryStore();
         await _temporary.Store.AppendAsync([.. Enumerable.Range(0, Callers).Select(Next)]);
         for (var i = 0; i < Callers; i++)
         {

@@ -7,12 +7,13 @@ namespace RespDerive.Benchmarks.Stages;
 /// <summary>A turn as the service takes it, on a store that holds a day of the patient: open, read, look up, work out. Without the commit.</summary>
 public class TurnFromStore
 {
-    private readonly TemporaryStore _temporary = new();
+    private TemporaryStore _temporary = null!;
     private long _patient;
 
     [GlobalSetup]
     public async Task SetUpAsync()
     {
+        _temporary = new TemporaryStore();
         await _temporary.AppendAsync(Day.Made.Messages.Where(message => !Day.Made.IsOfMinute(message)));
         _patient = _temporary.Store.PatientNumber(Ward.Source, Day.Made.Messages[^1].Patient)!.Value;
         await _temporary.TakeAllAsync(_patient);
