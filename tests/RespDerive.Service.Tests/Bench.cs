@@ -72,6 +72,15 @@ internal sealed class Bench : IAsyncDisposable
         }
     }
 
+    /// <summary>Deletes the store, as when its disk is lost; only while the service is stopped.</summary>
+    public void ForgetStore()
+    {
+        foreach (var file in _folder.GetFiles("bench.db*"))
+        {
+            file.Delete();
+        }
+    }
+
     public Task<HttpResponseMessage> NotifyAsync(HttpMethod method, string path, HttpContent? content = null, string? authorization = null)
     {
         var request = new HttpRequestMessage(method, $"{Address}/notify{path}") { Content = content };
@@ -86,7 +95,7 @@ internal sealed class Bench : IAsyncDisposable
     /// <summary>The one result of a definition that meets a condition, waited for; in vain, the test says what the service thinks.</summary>
     public Task<JsonObject> ResultAsync(string patient, string definition, Func<JsonObject, bool> condition) => Fhir.ResultAsync(patient, definition, condition, Thoughts);
 
-    private string Thoughts() => string.Join('\n', [
+    public string Thoughts() => string.Join('\n', [
         Store.Counts().ToString(),
         .. Store.Outcomes(new OutcomeFilter()).Select(one => $"{one.Current?.Definition} {one.Current?.Value} {one.Current?.Withheld} tries {one.Tries} parked {one.Parked} {one.ParkedText} wanted {one.Wanted} delivered {one.Delivered}"),
         CapturedLogs.Text]);
