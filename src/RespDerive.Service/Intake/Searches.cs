@@ -19,7 +19,20 @@ internal sealed class Searches(Store store, SourceServer source, Ingest ingest, 
         var from = store.Cursor(name) is { } kept && DateTimeOffset.TryParse(kept, CultureInfo.InvariantCulture, DateTimeStyles.RoundtripKind, out var cursor)
             ? cursor - _intake.Overlap
             : time.GetUtcNow() - _intake.FirstLookBack;
+        while (await ReadAsync(criterion, name, from, cancel) is { } latest && latest > from)
+        {
+            from = latest;
+        }
+    }
+
+    /// <summary>
+    /// Reads what changed since a time. Some servers fill one page and give no next link: then the answer is the time to go on from.
+    /// Null when all was read.
+    /// </summary>
+    private async Task<DateTimeOffset?> ReadAsync(string criterion, string name, DateTimeOffset from, CancellationToken cancel)
+    {
         var latest = from;
+        var (pages, full) = (0, false);
         var query = $"{criterion}{(criterion.EndsWith('?') ? "" : "&")}_lastUpdated=ge{Uri.EscapeDataString(from.UtcDateTime.ToString("yyyy-MM-ddTHH:mm:ss.fffZ", CultureInfo.InvariantCulture))}"
             + $"&_sort=_lastUpdated&_count={_intake.PageSize.ToString(CultureInfo.InvariantCulture)}";
         await foreach (var page in source.Server.SearchAsync(query, cancel))
@@ -30,9 +43,15 @@ internal sealed class Searches(Store store, SourceServer source, Ingest ingest, 
                 latest = changed > latest ? changed.Value : latest;
             }
 
-            var moved = page.Entries.Count > 0 ? new Cursor(name, latest.ToString("O", CultureInfo.InvariantCulture)) : null;
+            // Where the server does not say that it sorted, older changes may stand on a later page.
+            var all = !page.HasNext || page.Self?.Contains("_sort=", StringComparison.Ordinal) == true;
+            var moved = all && latest > from ? new Cursor(name, latest.ToString("O", CultureInfo.InvariantCulture)) : null;
             await ingest.AcceptAsync([.. page.Entries.Select(entry => new Brought(entry.Resource, entry.FullUrl))], moved);
+            pages++;
+            full = page.Entries.Count >= _intake.PageSize && !page.HasNext;
         }
+
+        return full && pages == 1 ? latest : null;
     }
 
     private static DateTimeOffset? LastUpdated(byte[] resource)
