@@ -28,7 +28,8 @@ internal static class Until
         }
     }
 
-    public static Task True(Func<bool> condition, string what) => Some(() => Task.FromResult(condition() ? "" : null), what);
+    public static Task True(Func<bool> condition, string what, Func<string>? otherwise = null) =>
+        Some(() => Task.FromResult(condition() ? "" : null), what, otherwise is null ? null : () => Task.FromResult(otherwise()));
 
     public static Task True(Func<Task<bool>> condition, string what) => Some(async () => await condition() ? "" : null, what);
 }
