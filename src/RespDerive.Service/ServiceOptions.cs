@@ -58,7 +58,7 @@ public sealed class IntakeOptions
 
     /// <summary>What is used when <see cref="Criteria"/> is empty.</summary>
     public static IReadOnlyList<string> DefaultCriteria { get; } =
-        ["Observation?", "Patient?", "Specimen?", "Encounter?", "DeviceMetric?", "DiagnosticReport?"];
+        ["Observation?", "Patient?", "Specimen?", "Encounter?", "DeviceMetric?", "DiagnosticReport?", "Procedure?"];
 
     /// <summary>Create and keep rest-hook Subscriptions at the source; they notify <see cref="Endpoint"/>.</summary>
     public bool Subscribe { get; set; }

@@ -65,8 +65,9 @@ public sealed class PatientHistory : IPatientHistory, IDisposable
     public IReadOnlyList<Outcome> Outcomes(string definition, DateTimeOffset from, DateTimeOffset to) =>
         Open.All(Sql.OutcomesBetween, row => _records.Outcome(row.GetFieldValue<byte[]>(0)), _patient, definition, from.UtcTicks, to.UtcTicks);
 
-    /// <summary>The winning version of a resource, also when it is gone; null when none has come in.</summary>
-    public ResourceBody? Find(string source, string reference) => Open.One(Sql.FindBody, Columns.Body, source, reference);
+    /// <summary>The winning version of a resource by its reference or another name, also when it is gone; null when none has come in.</summary>
+    public ResourceBody? Find(string source, string reference) =>
+        Open.One(Sql.FindBody, Columns.Body, source, reference) ?? Open.One(Sql.FindNamed, Columns.Body, source, reference);
 
     /// <summary>Winning versions, not gone, of the Observations and DiagnosticReports that refer to a resource.</summary>
     public IReadOnlyList<ResourceBody> PanelsOf(string source, string reference) => Open.All(Sql.Panels, Columns.Body, source, reference);

@@ -46,15 +46,20 @@ internal static class Sql
 
     public const string AddVersion =
         """
-        INSERT INTO version (resource, base, version, updated, number, digest, patient, arrived, gone, body)
-        VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10) RETURNING id
+        INSERT INTO version (resource, base, version, updated, number, digest, patient, arrived, gone, body, links)
+        VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11) RETURNING id
         """;
 
     public const string VersionOrder = "SELECT updated, number, digest FROM version WHERE id = $1";
+    public const string IsGone = "SELECT gone FROM version WHERE id = $1";
     public const string SetWinner = "UPDATE resource SET winner = $2, patient = $3 WHERE id = $1";
     public const string ReferencesOf = "SELECT target FROM reference WHERE resource = $1";
     public const string ClearReferences = "DELETE FROM reference WHERE resource = $1";
     public const string AddReference = "INSERT INTO reference (source, target, resource) VALUES ($1, $2, $3) ON CONFLICT DO NOTHING";
+
+    public const string NamesOf = "SELECT name FROM name WHERE resource = $1";
+    public const string ClearNames = "DELETE FROM name WHERE resource = $1";
+    public const string AddName = "INSERT INTO name (source, name, resource) VALUES ($1, $2, $3) ON CONFLICT DO NOTHING";
 
     public const string Referring =
         """
@@ -66,11 +71,14 @@ internal static class Sql
 
     private const string Body =
         """
-        SELECT r.source, r.type, r.rid, v.base, v.version, v.updated, v.number, v.digest, p.reference, v.body, v.arrived, v.gone
+        SELECT r.source, r.type, r.rid, v.base, v.version, v.updated, v.number, v.digest, p.reference, v.body, v.arrived, v.gone, v.links
         FROM resource r JOIN version v ON v.id = r.winner LEFT JOIN patient p ON p.id = v.patient
         """;
 
     public const string FindBody = Body + " WHERE r.source = $1 AND r.reference = $2";
+
+    // of several with one name, the one that came first
+    public const string FindNamed = Body + " JOIN name n ON n.resource = r.id WHERE n.source = $1 AND n.name = $2 ORDER BY r.id LIMIT 1";
 
     public const string Panels = Body +
         """
@@ -92,7 +100,7 @@ internal static class Sql
     public const string OpenBodies =
         """
         SELECT r.source, r.type, r.rid, v.base, v.version, v.updated, v.number, v.digest, p.reference,
-               CASE WHEN r.patient = o.patient THEN v.body ELSE x'' END, v.arrived, v.gone,
+               CASE WHEN r.patient = o.patient THEN v.body ELSE x'' END, v.arrived, v.gone, v.links,
                o.mark, CASE WHEN r.patient = o.patient THEN 0 ELSE 1 END
         FROM open o JOIN resource r ON r.id = o.resource JOIN version v ON v.id = r.winner LEFT JOIN patient p ON p.id = v.patient
         WHERE o.patient = $1 ORDER BY o.mark LIMIT $2
@@ -208,10 +216,14 @@ internal static class Sql
         ON CONFLICT (source, target) DO UPDATE SET asked = fetch.asked + 1
         """;
 
-    public const string DueFetches = "SELECT id, source, target, asked, tries, since FROM fetch WHERE due <= $1 ORDER BY due, id LIMIT $2";
+    public const string DueFetches = "SELECT id, source, target, asked, tries, since, missing, missing_since FROM fetch WHERE due <= $1 ORDER BY due, id LIMIT $2";
     public const string FetchDone = "DELETE FROM fetch WHERE id = $1 AND asked = $2";
-    public const string FetchAgain = "UPDATE fetch SET tries = 0, due = 0 WHERE id = $1";
-    public const string FetchRetry = "UPDATE fetch SET tries = $2, due = $3 WHERE id = $1";
+    public const string FetchAgain = "UPDATE fetch SET tries = 0, due = 0, missing = 0, missing_since = NULL WHERE id = $1";
+    public const string FetchRetry = "UPDATE fetch SET tries = $2, due = $3, missing = 0, missing_since = NULL WHERE id = $1";
+
+    public const string FetchMissing =
+        "UPDATE fetch SET tries = tries + 1, due = $3, missing = missing + 1, missing_since = coalesce(missing_since, $2) WHERE id = $1";
+
     public const string CountFetches = "SELECT count(*) FROM fetch";
     public const string Cursor = "SELECT value FROM cursor WHERE name = $1";
     public const string SetCursor = "INSERT INTO cursor (name, value) VALUES ($1, $2) ON CONFLICT (name) DO UPDATE SET value = excluded.value";

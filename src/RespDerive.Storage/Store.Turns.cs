@@ -17,7 +17,7 @@ public sealed partial class Store
             return null;
         }
 
-        var open = session.All(Sql.OpenBodies, row => (Body: Columns.Body(row), Mark: row.GetInt64(12), Left: row.GetInt64(13) == 1), patient, limit);
+        var open = session.All(Sql.OpenBodies, row => (Body: Columns.Body(row), Mark: row.GetInt64(13), Left: row.GetInt64(14) == 1), patient, limit);
         var upTo = open.Count == 0 ? 0 : open[^1].Mark;
         return new TurnInput
         {

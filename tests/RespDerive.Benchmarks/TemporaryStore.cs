@@ -34,12 +34,12 @@ internal sealed class TemporaryStore : IAsyncDisposable
     {
         var input = Store.OpenTurn(patient)!;
         using var history = Store.History(patient);
-        var set = new StoredResourceSet(history, input.Source);
+        var set = new StoredResourceSet(history, input.Source, Ward.Site.SourceBase);
         var replacements = input.Left.Select(key => new Replacement(key, [])).ToList();
         Person? person = null;
         foreach (var resource in input.Resources)
         {
-            var read = StoredResourceSet.FactsOf(resource) is { } facts ? Ward.Site.Rules.Read(facts, set) : new ReadResult();
+            var read = set.FactsOf(resource) is { } facts ? Ward.Site.Rules.Read(facts, set) : new ReadResult();
             person = read.Person ?? person;
             replacements.Add(new Replacement(resource.Key, read.Readings));
         }

@@ -4,14 +4,14 @@ using System.Text.Json;
 namespace RespDerive.Fhir;
 
 /// <summary>A Bundle taken apart.</summary>
-internal static class Bundles
+public static class Bundles
 {
-    public static readonly IReadOnlyDictionary<string, string> NoLinks = new Dictionary<string, string>();
+    internal static readonly IReadOnlyDictionary<string, string> NoLinks = new Dictionary<string, string>();
 
-    public static bool IsBundle(JsonElement root) => root.Text("resourceType") == "Bundle";
+    internal static bool IsBundle(JsonElement root) => root.Text("resourceType") == "Bundle";
 
     /// <summary>Entries that hold a resource; one that holds something else in its place is refused alone.</summary>
-    public static IEnumerable<FiledResource> Entries(long line, JsonElement bundle)
+    internal static IEnumerable<FiledResource> Entries(long line, JsonElement bundle)
     {
         var links = Links(bundle);
         var index = -1;
@@ -38,7 +38,9 @@ internal static class Bundles
     /// Within a Bundle a URN stands for its entry. Where that entry's resource has an id, its references are turned into that
     /// id's, so that they mean the same outside this Bundle.
     /// </summary>
-    private static Dictionary<string, string> Links(JsonElement bundle)
+    /// <param name="bundle">The Bundle.</param>
+    /// <returns>References by URN.</returns>
+    public static IReadOnlyDictionary<string, string> Links(JsonElement bundle)
     {
         var links = new Dictionary<string, string>(StringComparer.Ordinal);
         foreach (var entry in bundle.Each("entry"))

@@ -38,6 +38,9 @@ public sealed record ResourceFacts
     /// <summary>What only this type of resource has.</summary>
     public required TypeFacts Content { get; init; }
 
+    /// <summary>True for an Observation that names no patient: it still replaces the version before, and says nothing itself.</summary>
+    public bool LacksPatient => Patient is null && Content is ObservationFacts;
+
     /// <summary>
     /// True when this version of the same resource is newer. Between two that carry neither version nor time of change,
     /// the one that came later is.

@@ -13,10 +13,11 @@ internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ing
     /// <summary>Marks a fetch row that is a search to be queried again, not a reference.</summary>
     public const string QueryMark = "?";
 
-    /// <summary>A resource that was never there is given up after so many tries, so that what waits for it goes on without it.</summary>
-    private const int TriesOfTheUnknown = 5;
+    /// <summary>A resource that was never there is given up when so many reads in a row found nothing, so that what waits for it goes on without it.</summary>
+    private const int ReadsOfTheUnknown = 5;
 
     private static readonly TimeSpan Idle = TimeSpan.FromSeconds(1);
+    private static readonly TimeSpan Longest = TimeSpan.FromMinutes(5);
     private readonly TimeProvider _time = time;
 
     /// <summary>True for a relative reference to a resource of the source.</summary>
@@ -62,16 +63,16 @@ internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ing
         var answer = await source.Server.ReadAsync(fetch.Target, cancel);
         if (answer.Found)
         {
-            await ingest.Value.AcceptAsync([new Brought(answer.Body, $"{source.Base}/{fetch.Target}")]);
+            await ingest.Value.AcceptAsync([new Brought(answer.Body, $"{source.Base}/{fetch.Target}") { Read = true }]);
             await store.FetchDoneAsync(fetch);
         }
-        else if (answer.Status == 410 || (answer.Status is 404 or 403 && store.Find(fetch.Source, fetch.Target) is null && fetch.Tries + 1 >= TriesOfTheUnknown))
+        else if (answer.Status == 410)
         {
             await GoneAsync(fetch);
         }
-        else if (answer.Status is 404 or 403 && store.Find(fetch.Source, fetch.Target) is { } known)
+        else if (answer.Status is 404 or 403)
         {
-            await VanishedAsync(fetch, known, cancel);
+            await (store.Find(fetch.Source, fetch.Target) is { } known ? VanishedAsync(fetch, known, cancel) : UnknownAsync(fetch));
         }
         else
         {
@@ -79,15 +80,38 @@ internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ing
         }
     }
 
-    private async Task VanishedAsync(Fetch fetch, ResourceBody known, CancellationToken cancel)
+    private async Task UnknownAsync(Fetch fetch)
     {
-        if (Disappearances.IsLast(fetch.Tries) && await RecordIsReadableAsync(known, cancel) && disappearances.Allow(_time.GetUtcNow()))
+        if (fetch.Missing + 1 >= ReadsOfTheUnknown)
         {
             await GoneAsync(fetch);
         }
         else
         {
-            await store.FetchRetryAsync(fetch.Id, fetch.Tries + 1, _time.GetUtcNow() + Disappearances.BetweenReads);
+            var now = _time.GetUtcNow();
+            await store.FetchMissingAsync(fetch.Id, now, now + BackOff.After(fetch.Missing, Longest, fetch.Target));
+        }
+    }
+
+    /// <summary>Only a read in which the control could be read counts, and any other answer starts the count anew.</summary>
+    private async Task VanishedAsync(Fetch fetch, ResourceBody known, CancellationToken cancel)
+    {
+        var now = _time.GetUtcNow();
+        if (known.Gone)
+        {
+            await store.FetchDoneAsync(fetch);
+        }
+        else if (!await RecordIsReadableAsync(known, cancel))
+        {
+            await store.FetchRetryAsync(fetch.Id, fetch.Tries + 1, now + Disappearances.BetweenReads);
+        }
+        else if (Disappearances.IsLast(fetch.Missing, fetch.MissingSince, now) && disappearances.Allow(now))
+        {
+            await GoneAsync(fetch);
+        }
+        else
+        {
+            await store.FetchMissingAsync(fetch.Id, now, now + Disappearances.BetweenReads);
         }
     }
 
@@ -105,5 +129,5 @@ internal sealed class Awaited(Store store, SourceServer source, Lazy<Ingest> ing
     }
 
     private Task AgainAsync(Fetch fetch, TimeSpan? after) =>
-        store.FetchRetryAsync(fetch.Id, fetch.Tries + 1, _time.GetUtcNow() + (after ?? BackOff.After(fetch.Tries, TimeSpan.FromMinutes(5), fetch.Target)));
+        store.FetchRetryAsync(fetch.Id, fetch.Tries + 1, _time.GetUtcNow() + (after ?? BackOff.After(fetch.Tries, Longest, fetch.Target)));
 }

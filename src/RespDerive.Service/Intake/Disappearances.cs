@@ -13,14 +13,18 @@ internal sealed class Disappearances
     public static readonly TimeSpan BetweenReads = TimeSpan.FromHours(12);
 
     private const int Reads = 3;
+    private static readonly TimeSpan Span = TimeSpan.FromHours(24);
     private const int MostInAnHour = 20;
     private static readonly TimeSpan Hour = TimeSpan.FromHours(1);
     private static readonly Counter<long> Held = Telemetry.Meter.CreateCounter<long>("respderive.intake.withdrawals_held", "{resource}", "Withdrawals held back because too many resources vanished within an hour");
     private readonly Queue<DateTimeOffset> _recent = new();
     private readonly Lock _lock = new();
 
-    /// <summary>True when a read that found nothing is the last one needed.</summary>
-    public static bool IsLast(int triesBefore) => triesBefore + 1 >= Reads;
+    /// <summary>True when a read that finds nothing is the last one needed.</summary>
+    /// <param name="before">Reads in a row that found nothing before this one.</param>
+    /// <param name="since">Time of the first of them.</param>
+    /// <param name="now">Time of this one.</param>
+    public static bool IsLast(int before, DateTimeOffset? since, DateTimeOffset now) => before + 1 >= Reads && now - since >= Span;
 
     /// <summary>Counts a withdrawal; false when more than twenty came within an hour, which looks like a fault of the source.</summary>
     public bool Allow(DateTimeOffset now)

@@ -1,4 +1,5 @@
 using System.Text.Json;
+using RespDerive.Fhir;
 
 namespace RespDerive.Service.Intake;
 
@@ -29,6 +30,7 @@ internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyLis
     {
         var brought = new List<Brought>();
         var named = new List<string>();
+        var links = Bundles.Links(bundle);
         foreach (var entry in Items(bundle, "entry"))
         {
             if (!entry.TryGetProperty("resource", out var resource) || resource.ValueKind != JsonValueKind.Object)
@@ -42,12 +44,16 @@ internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyLis
             }
             else
             {
-                brought.Add(new Brought(JsonSerializer.SerializeToUtf8Bytes(resource), Text(entry, "fullUrl")));
+                brought.Add(new Brought(JsonSerializer.SerializeToUtf8Bytes(resource), Text(entry, "fullUrl")) { Links = Used(links, resource.GetRawText()) });
             }
         }
 
         return new Notification(brought, [.. named.Distinct(StringComparer.Ordinal)]);
     }
+
+    /// <summary>The links that a resource uses; they are kept with it, since its URNs mean nothing outside this Bundle.</summary>
+    private static Dictionary<string, string> Used(IReadOnlyDictionary<string, string> links, string resource) =>
+        links.Where(link => resource.Contains($"\"{link.Key}\"", StringComparison.Ordinal)).ToDictionary(StringComparer.Ordinal);
 
     /// <summary>References called focus, wherever the status resource keeps them; the last two path segments make them relative.</summary>
     private static IEnumerable<string> Focus(JsonElement status)

@@ -4,18 +4,23 @@ using Microsoft.Extensions.Logging;
 using Microsoft.Extensions.Options;
 using RespDerive.Fhir.Server;
 using RespDerive.Service.Operations;
+using RespDerive.Storage;
+using Task = System.Threading.Tasks.Task;
 
 namespace RespDerive.Service.Intake;
 
-/// <summary>Keeps one rest-hook Subscription per criterion at the source: creates what is missing, asks again for what the server turned off.</summary>
-internal sealed class SubscriptionKeeper(SourceServer source, IOptions<ServiceOptions> options, TimeProvider time, ILogger<SubscriptionKeeper> logger) : Loop(time, logger)
+/// <summary>
+/// Keeps one rest-hook Subscription per criterion at the source: creates what is missing, asks again for what the server turned off.
+/// It is known again by the id the server gave it, since a server may rewrite the criteria; where the store was lost, by the criteria.
+/// </summary>
+internal sealed class SubscriptionKeeper(Store store, SourceServer source, IOptions<ServiceOptions> options, TimeProvider time, ILogger<SubscriptionKeeper> logger) : Loop(time, logger)
 {
     private static readonly TimeSpan Every = TimeSpan.FromMinutes(1);
 
     /// <summary>True once every criterion had a subscription.</summary>
     public bool Kept { get; private set; }
 
-    protected override async System.Threading.Tasks.Task<TimeSpan> RoundAsync(CancellationToken cancel)
+    protected override async Task<TimeSpan> RoundAsync(CancellationToken cancel)
     {
         var intake = options.Value.Intake;
         if (!intake.Subscribe)
@@ -23,18 +28,26 @@ internal sealed class SubscriptionKeeper(SourceServer source, IOptions<ServiceOp
             return TimeSpan.FromHours(1);
         }
 
-        var known = await KnownAsync(intake.Endpoint!, cancel);
+        Dictionary<string, (string Id, string? Status)>? known = null;
         foreach (var criterion in intake.Searches)
         {
-            if (!known.TryGetValue(criterion, out var there))
+            var name = $"subscription:{intake.Endpoint!.AbsoluteUri} {criterion}";
+            var there = store.Cursor(name) is { } id ? await StatusAsync(id, cancel) : null;
+            if (there is null)
             {
-                Look(await source.Server.CreateAsync(Subscription(criterion, intake), null, cancel), criterion);
+                known ??= await KnownAsync(intake.Endpoint, cancel);
+                there = known.TryGetValue(criterion, out var found) ? found : null;
             }
-            else if (there.Status is "error" or "off")
+
+            if (there is not { } one)
+            {
+                await LookAsync(await source.Server.CreateAsync(Subscription(criterion, intake), null, cancel), criterion, name);
+            }
+            else if (one.Status is "error" or "off")
             {
                 var again = Subscription(criterion, intake);
-                again.Id = there.Id;
-                Look(await source.Server.UpdateAsync(again, null, cancel), criterion);
+                again.Id = one.Id;
+                await LookAsync(await source.Server.UpdateAsync(again, null, cancel), criterion, name);
             }
         }
 
@@ -42,9 +55,26 @@ internal sealed class SubscriptionKeeper(SourceServer source, IOptions<ServiceOp
         return Every;
     }
 
-    private void Look(ServerAnswer answer, string criterion)
+    /// <summary>Null when the server has it no more; an answer that says nothing leaves it as it is until the next round.</summary>
+    private async Task<(string Id, string? Status)?> StatusAsync(string id, CancellationToken cancel)
     {
-        if (answer is not ServerAnswer.Delivered)
+        var answer = await source.Server.ReadAsync($"Subscription/{id}", cancel);
+        if (!answer.Found)
+        {
+            return answer.Status is 404 or 410 ? null : (id, null);
+        }
+
+        using var json = JsonDocument.Parse(answer.Body);
+        return (id, Text(json.RootElement, "status"));
+    }
+
+    private async Task LookAsync(ServerAnswer answer, string criterion, string name)
+    {
+        if (answer is ServerAnswer.Delivered kept)
+        {
+            await store.SetCursorAsync(new Cursor(name, kept.Id));
+        }
+        else
         {
             logger.LogWarning("No subscription for {Type}: {Answer}; polling goes on", criterion.Split('?')[0], answer.GetType().Name);
         }

@@ -73,7 +73,7 @@ internal sealed class Webhook(Store store, Ingest ingest, Awaited awaited, Site 
             var parts = request.Path.Value![Path.Length..].Split('/', StringSplitOptions.RemoveEmptyEntries);
             await FetchAsync(parts.Length >= 2 ? [$"{parts[^2]}/{parts[^1]}"] : Everything());
         }
-        else if (body.AsSpan().Trim(" \t\r\n"u8).Length is 0 or 2)
+        else if (IsEmpty(body))
         {
             // No content, or an empty object: something changed, and only the criteria say what to ask for.
             await FetchAsync(Everything());
@@ -104,6 +104,14 @@ internal sealed class Webhook(Store store, Ingest ingest, Awaited awaited, Site 
 
         var reasons = await ingest.AcceptAsync(notification.Brought);
         return !reasons.All(reason => reason is Fhir.Refusals.NotJson or Fhir.Refusals.NotFhir);
+    }
+
+    /// <summary>Nothing but white space, or {}.</summary>
+    private static bool IsEmpty(ReadOnlySpan<byte> body)
+    {
+        var blank = " \t\r\n"u8;
+        body = body.Trim(blank);
+        return body.IsEmpty || (body is [(byte)'{', .. var inner, (byte)'}'] && inner.Trim(blank).IsEmpty);
     }
 
     private IReadOnlyList<string> Everything() => [.. options.Value.Intake.Searches.Select(criterion => Awaited.QueryMark + criterion)];

@@ -42,7 +42,7 @@ internal sealed class PatientGrain(PatientTurn turn, TimeProvider time, ILogger<
         {
             // A patient whose turn keeps failing must not keep the others waiting.
             _notBefore = time.GetUtcNow() + BackOff.After(_failures++, TimeSpan.FromMinutes(5), $"{patient}");
-            Trouble.Report(logger, exception, $"A turn of patient {patient} failed and will be swept up");
+            Trouble.Report(logger, exception, "A turn of a patient failed and will be swept up");
         }
     }
 }

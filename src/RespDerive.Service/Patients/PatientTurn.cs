@@ -52,13 +52,13 @@ internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Fee
     private (TurnChanges Changes, IReadOnlyList<string> Unresolved) Work(long patient, TurnInput input)
     {
         using var history = store.History(patient);
-        var set = new StoredResourceSet(history, input.Source);
+        var set = new StoredResourceSet(history, input.Source, site.SourceBase);
         var replacements = input.Left.Select(key => new Replacement(key, [])).ToList();
         var unresolved = new HashSet<string>(StringComparer.Ordinal);
         Person? person = null;
         foreach (var resource in input.Resources)
         {
-            if (resource.Gone || StoredResourceSet.FactsOf(resource) is not { } facts)
+            if (resource.Gone || set.FactsOf(resource) is not { } facts)
             {
                 replacements.Add(new Replacement(resource.Key, []));
                 continue;
@@ -71,7 +71,8 @@ internal sealed class PatientTurn(Store store, Site site, TimeProvider time, Fee
             unresolved.UnionWith(missing);
 
             // What decides the meaning of a reading is waited for: a specimen its site and time, a metric whether it is set or measured.
-            replacements.Add(new Replacement(resource.Key, missing.Any(Awaited.Decides) ? [] : read.Readings));
+            // Meanwhile what the resource said before stands, so that nothing is retracted only to come back.
+            replacements.Add(new Replacement(resource.Key, missing.Any(Awaited.Decides) ? history.ReadingsOf(resource.Key) : read.Readings));
         }
 
         if (person is null && history.Person is null && history.Find(input.Source, input.Patient) is null && awaited.CanBeFetched(input.Patient))

@@ -17,17 +17,17 @@ internal sealed class Append(Session session, Arrival arrival)
         if (winner is not null && session.Number(Sql.FindVersion, resource, Columns.Updated(order), Columns.Number(order), order.Digest) is not null)
         {
             session.Execute(Sql.AddTally, Tallies.Repeats, 1);
-            return new Appended(New: false, Won: false, []);
+            return new Appended(New: false, Won: false, [], IsGone(winner));
         }
 
         // a withdrawal often does not know the patient
         var patient = arrival.Patient is { } reference ? NumberOf(reference) : arrival.Gone ? before : null;
         var version = session.Number(Sql.AddVersion, resource, arrival.Base, arrival.Version, Columns.Updated(order), Columns.Number(order),
-            order.Digest, patient, arrival.Arrived.UtcTicks, arrival.Gone ? 1 : 0, arrival.Body.ToArray());
+            order.Digest, patient, arrival.Arrived.UtcTicks, arrival.Gone ? 1 : 0, arrival.Body.ToArray(), Columns.Text(arrival.Links));
         session.Execute(Sql.AddTally, Tallies.Received, 1);
         if (!Wins(order, winner))
         {
-            return new Appended(New: true, Won: false, []);
+            return new Appended(New: true, Won: false, [], IsGone(winner));
         }
 
         session.Execute(Sql.SetWinner, resource, version, patient);
@@ -36,9 +36,16 @@ internal sealed class Append(Session session, Arrival arrival)
         var earlier = winner is null ? [] : session.All(Sql.ReferencesOf, row => row.GetString(0), resource);
         ReplaceReferences(resource, earlier);
         OpenReferring(arrival.Key.Reference);
+        foreach (var name in ReplaceNames(resource, winner is null))
+        {
+            OpenReferring(name);
+        }
+
         OpenMembers(earlier.Union(arrival.References));
-        return new Appended(New: true, Won: true, [.. _wake]);
+        return new Appended(New: true, Won: true, [.. _wake], arrival.Gone);
     }
+
+    private bool IsGone(long? winner) => session.Number(Sql.IsGone, winner) == 1;
 
     private (long Resource, long? Winner, long? Patient) FindOrAddResource()
     {
@@ -84,6 +91,23 @@ internal sealed class Append(Session session, Arrival arrival)
         {
             session.Execute(Sql.AddReference, Source, target, resource);
         }
+    }
+
+    // All names it had or has: what refers to it by one of them may read differently now.
+    private List<string> ReplaceNames(long resource, bool first)
+    {
+        var earlier = first ? [] : session.All(Sql.NamesOf, row => row.GetString(0), resource);
+        if (earlier.Count > 0)
+        {
+            session.Execute(Sql.ClearNames, resource);
+        }
+
+        foreach (var name in arrival.Names)
+        {
+            session.Execute(Sql.AddName, Source, name, resource);
+        }
+
+        return [.. earlier.Union(arrival.Names)];
     }
 
     // Through resources of no patient on to those that refer to them: Observation to DeviceMetric to Device.

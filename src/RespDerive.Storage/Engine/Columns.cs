@@ -1,3 +1,4 @@
+using System.Text.Json;
 using Microsoft.Data.Sqlite;
 using RespDerive.Timeline;
 
@@ -8,6 +9,8 @@ internal static class Columns
 {
     // least in the total order of versions, as a missing part has to be
     private const long Missing = long.MinValue;
+
+    private static readonly Dictionary<string, string> NoLinks = [];
 
     public static long Updated(VersionOrder order) => order.LastUpdated?.UtcTicks ?? Missing;
 
@@ -38,5 +41,13 @@ internal static class Columns
         Body = row.GetFieldValue<byte[]>(9),
         Arrived = Time(row.GetInt64(10)),
         Gone = row.GetInt64(11) == 1,
+        Links = Links(OptionalText(row, 12)),
     };
+
+    /// <summary>Links as a JSON object; null when there are none.</summary>
+    public static string? Text(IReadOnlyDictionary<string, string> links) =>
+        links.Count == 0 ? null : JsonSerializer.Serialize(links, RecordsJson.Default.IReadOnlyDictionaryStringString);
+
+    private static IReadOnlyDictionary<string, string> Links(string? text) =>
+        text is null ? NoLinks : JsonSerializer.Deserialize(text, RecordsJson.Default.IReadOnlyDictionaryStringString)!;
 }

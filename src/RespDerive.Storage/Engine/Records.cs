@@ -44,6 +44,7 @@ internal sealed class Records(Func<string, Kind?> kinds)
 [JsonSerializable(typeof(Reading))]
 [JsonSerializable(typeof(Person))]
 [JsonSerializable(typeof(Outcome))]
+[JsonSerializable(typeof(IReadOnlyDictionary<string, string>))]
 internal sealed partial class RecordsJson : JsonSerializerContext;
 
 /// <summary>A kind as its key.</summary>

@@ -35,6 +35,12 @@ public sealed record Arrival
     /// </summary>
     public IReadOnlyList<string> References { get; init; } = [];
 
+    /// <summary>Other names by which resources refer to this one: <c>identifier:system|value</c>.</summary>
+    public IReadOnlyList<string> Names { get; init; } = [];
+
+    /// <summary>References that URNs in the body stand for, where a Bundle brought it.</summary>
+    public IReadOnlyDictionary<string, string> Links { get; init; } = new Dictionary<string, string>();
+
     /// <summary>The order of a withdrawal seen while the given version was the newest known: after it, before any with a later time or number.</summary>
     public static VersionOrder GoneAfter(VersionOrder known) => Following(known, "-gone");
 
@@ -53,7 +59,8 @@ public sealed record Arrival
 /// <param name="New">False when this version was there already; nothing was changed then.</param>
 /// <param name="Won">True when it is now the winning version of its resource.</param>
 /// <param name="Patients">Numbers of the patients to wake.</param>
-public sealed record Appended(bool New, bool Won, IReadOnlyList<long> Patients);
+/// <param name="Withdrawn">True when the winning version is a withdrawal.</param>
+public sealed record Appended(bool New, bool Won, IReadOnlyList<long> Patients, bool Withdrawn = false);
 
 /// <summary>A poll position that moves in the same transaction as what was read up to it.</summary>
 public sealed record Cursor(string Name, string Value);
@@ -84,4 +91,7 @@ public sealed record ResourceBody
 
     /// <summary>The server has withdrawn the resource.</summary>
     public bool Gone { get; init; }
+
+    /// <summary>References that URNs in the body stand for.</summary>
+    public IReadOnlyDictionary<string, string> Links { get; init; } = new Dictionary<string, string>();
 }

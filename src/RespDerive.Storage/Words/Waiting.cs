@@ -7,7 +7,9 @@ namespace RespDerive.Storage;
 /// <param name="Asked">How often it was asked for; asked again while under way, it is read again.</param>
 /// <param name="Tries">Failed attempts.</param>
 /// <param name="Since">When first asked for.</param>
-public sealed record Fetch(long Id, string Source, string Target, long Asked, int Tries, DateTimeOffset Since);
+/// <param name="Missing">How often in a row it was not found.</param>
+/// <param name="MissingSince">When it was first not found, of those times; null when it never was.</param>
+public sealed record Fetch(long Id, string Source, string Target, long Asked, int Tries, DateTimeOffset Since, int Missing, DateTimeOffset? MissingSince);
 
 /// <summary>Something that becomes due at a time.</summary>
 /// <param name="Purpose">What for.</param>

@@ -1,4 +1,5 @@
 using RespDerive.Fhir;
+using RespDerive.Physiology;
 using RespDerive.Service;
 
 namespace RespDerive.Files;
@@ -37,7 +38,15 @@ internal sealed class FileReading(Site site, TimeProvider time)
                     : new FactResult(null, item.Refused);
                 if (result.Facts is { } facts && !site.IsOwn(facts))
                 {
-                    Count++;
+                    if (facts.LacksPatient)
+                    {
+                        Refuse(Withheld.NoPatient);
+                    }
+                    else
+                    {
+                        Count++;
+                    }
+
                     yield return facts;
                 }
                 else if (result.Refused is Refusals.NotJson or Refusals.NotFhir)
@@ -46,10 +55,11 @@ internal sealed class FileReading(Site site, TimeProvider time)
                 }
                 else
                 {
-                    var reason = result.Refused ?? "own-output";
-                    _refused[reason] = _refused.GetValueOrDefault(reason) + 1;
+                    Refuse(result.Refused ?? "own-output");
                 }
             }
         }
     }
+
+    private void Refuse(string reason) => _refused[reason] = _refused.GetValueOrDefault(reason) + 1;
 }
