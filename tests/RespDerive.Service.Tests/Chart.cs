@@ -10,6 +10,8 @@ internal sealed class Chart(Bench bench)
     /// <summary>Time of the first gas.</summary>
     public static readonly DateTimeOffset Drawn = TimeProvider.System.GetUtcNow().AddMinutes(-30);
 
+    private Guid? _identity;
+
     /// <summary>Patient and a fraction of 0.40, so that a gas of 80 gives 200.</summary>
     public async Task OpenAsync()
     {
@@ -28,7 +30,7 @@ internal sealed class Chart(Bench bench)
 
     /// <summary>The one result in the store, once it meets a condition.</summary>
     public Task<Storage.Delivery> StateAsync(Func<Storage.Delivery, bool> condition) => Until.Some(
-        () => Task.FromResult(Identity is { } known && bench.Store.FindDelivery(known) is { } state && condition(state) ? state : null),
+        () => Task.FromResult((_identity ??= Listed) is { } known && bench.Store.FindDelivery(known) is { } state && condition(state) ? state : null),
         "a state of the delivery", () => Task.FromResult(bench.Thoughts()));
 
     /// <summary>Every copy at the server, by id.</summary>
@@ -54,12 +56,8 @@ internal sealed class Chart(Bench bench)
 
     public static int Revision(JsonObject provenance) => (int)provenance["target"]![0]!["extension"]![0]!["valuePositiveInt"]!;
 
-    private Guid? Identity { get; set; }
-
     /// <summary>Remembers which result is meant, also when nothing calls for it any more.</summary>
-    public async Task<Guid> IdentityAsync()
-    {
-        await Until.True(() => bench.Store.Outcomes(new OutcomeFilter { Definition = "pf-ratio" }).Count > 0, "a result", bench.Thoughts);
-        return (Identity = bench.Store.Outcomes(new OutcomeFilter { Definition = "pf-ratio" })[0].Identity).Value;
-    }
+    public Task IdentityAsync() => Until.True(() => (_identity ??= Listed) is not null, "a result", bench.Thoughts);
+
+    private Guid? Listed => bench.Store.Outcomes(new OutcomeFilter { Definition = "pf-ratio" }) is [var first, ..] ? first.Identity : null;
 }

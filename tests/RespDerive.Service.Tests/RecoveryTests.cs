@@ -12,8 +12,7 @@ public sealed class RecoveryTests
     public async Task Value_withdrawn_while_its_answer_was_outstanding_is_retracted_after_a_crash()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var (bench, chart) = (between.Bench, new Chart(between.Bench));
         await chart.OpenAsync();
         var (created, _) = between.KeepNextAnswer();
         await chart.GasAsync(80);
@@ -32,8 +31,7 @@ public sealed class RecoveryTests
     public async Task Crash_after_the_create_neither_doubles_nor_forgets_anything()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var (bench, chart) = (between.Bench, new Chart(between.Bench));
         await chart.OpenAsync();
         var (created, _) = between.KeepNextAnswer();
         await chart.GasAsync(80);
@@ -48,8 +46,7 @@ public sealed class RecoveryTests
     public async Task Crash_before_anything_was_sent_only_delays()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var (bench, chart) = (between.Bench, new Chart(between.Bench));
         await chart.OpenAsync();
         var reached = new TaskCompletionSource();
         between.Next(async (_, _, left) =>
@@ -70,8 +67,7 @@ public sealed class RecoveryTests
     public async Task Correction_that_comes_before_a_lost_answer_is_missed_follows_the_edition_it_corrects()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var chart = new Chart(between.Bench);
         await chart.OpenAsync();
         await chart.GasAsync(64);
         await chart.IdentityAsync();
@@ -90,8 +86,7 @@ public sealed class RecoveryTests
     public async Task Retraction_whose_answer_was_lost_is_ours_and_the_reinstated_value_follows()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var chart = new Chart(between.Bench);
         await chart.OpenAsync();
         await chart.GasAsync(80);
         await chart.IdentityAsync();
@@ -111,8 +106,7 @@ public sealed class RecoveryTests
     public async Task Edition_carried_out_late_is_known_by_its_Provenance()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var chart = new Chart(between.Bench);
         await chart.OpenAsync();
         await chart.GasAsync(64);
         await chart.IdentityAsync();
@@ -143,8 +137,7 @@ public sealed class RecoveryTests
     public async Task Half_a_transaction_and_a_crash_leave_one_Provenance_for_each_edition()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var (bench, chart) = (between.Bench, new Chart(between.Bench));
         await chart.OpenAsync();
         var halfDone = new TaskCompletionSource();
         between.Next(async (sent, pass, left) =>
@@ -170,8 +163,7 @@ public sealed class RecoveryTests
     public async Task Provenance_of_an_edition_that_never_was_is_taken_back()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var chart = new Chart(between.Bench);
         await chart.OpenAsync();
         await chart.GasAsync(64);
         await chart.AssertAsync(160, "CREATE");
@@ -185,11 +177,30 @@ public sealed class RecoveryTests
     }
 
     [Fact]
+    public async Task Edition_refused_given_up_and_there_all_the_same_is_followed_by_the_next()
+    {
+        await using var between = await Between.StartAsync();
+        var (bench, chart) = (between.Bench, new Chart(between.Bench));
+        await chart.OpenAsync();
+        await chart.GasAsync(64);
+        await chart.AssertAsync(160, "CREATE");
+        between.Next(async (sent, pass, _) =>
+        {
+            await pass(sent);
+            return Between.Failed(422, "business-rule");
+        });
+        await chart.GasAsync(72);
+        var refused = await chart.StateAsync(state => state.Parked == "business-rule");
+        Assert.True(await bench.Store.DropAsync(refused.Identity));
+        await chart.GasAsync(80);
+        await chart.AssertAsync(200, "CREATE", "UPDATE", "UPDATE");
+    }
+
+    [Fact]
     public async Task Version_that_the_server_does_not_tell_is_read()
     {
         await using var between = await Between.StartAsync();
-        var bench = between.Bench;
-        var chart = new Chart(bench);
+        var chart = new Chart(between.Bench);
         await chart.OpenAsync();
         between.Next(async (sent, pass, _) =>
         {

@@ -21,7 +21,7 @@ internal sealed class Postman(Target target, Site site, Store store, Recovery re
 
     public async Task<Became> DeliverAsync(Storage.Delivery delivery, CancellationToken cancel)
     {
-        if (IsContext(delivery))
+        if (delivery.Attempt is null && IsContext(delivery))
         {
             return new Became.Nothing();
         }
@@ -31,7 +31,7 @@ internal sealed class Postman(Target target, Site site, Store store, Recovery re
             return seen;
         }
 
-        if (EditionRules.Of(delivery) is not var (outcome, edition))
+        if (IsContext(delivery) || EditionRules.Of(delivery) is not var (outcome, edition))
         {
             // What was attempted is not there; a search that lags would say the same.
             return delivery is { Attempt: not null, ServerId: null, Tries: < Recovery.Patience } ? new Became.Again(null) : new Became.Nothing();
@@ -62,7 +62,7 @@ internal sealed class Postman(Target target, Site site, Store store, Recovery re
 
     /// <summary>What happened to the patient before the first start is context, unless it has been published.</summary>
     private bool IsContext(Storage.Delivery delivery) =>
-        delivery is { Current: { } current, Revisions: 0, ServerId: null, Attempt: null } && !options.Value.Delivery.PublishHistory && current.At < StartOf(store);
+        delivery is { Current: { } current, Revisions: 0, ServerId: null } && !options.Value.Delivery.PublishHistory && current.At < StartOf(store);
 
     private static DateTimeOffset StartOf(Store store) =>
         DateTimeOffset.Parse(store.Cursor(FirstStart.Name)!, System.Globalization.CultureInfo.InvariantCulture);

@@ -65,16 +65,19 @@ internal sealed class Recovery(Target target, Copies copies, Testimony testimony
             case Authorship.Attempted:
                 var attempt = delivery.Attempt!;
                 return await testimony.CompleteAsync(delivery, attempt, id, ours, cancel)
-                    ?? new Became.Delivered(attempt.Wanted, id, held.Version, held.IsFinal, held.IsRetracted);
+                    ?? (attempt.Wanted > delivery.Delivered
+                        ? new Became.Delivered(attempt.Wanted, id, held.Version, held.IsFinal, held.IsRetracted)
+                        : Adopted((int)delivery.Revisions + 1, held.IsFinal)); // given up meanwhile, and there all the same
             case Authorship.Forgotten earlier:
                 // What a retraction followed is no longer to be seen; saying amended of its successor claims less than saying final.
-                return held.Version is { } version
-                    ? new Became.Adopted(id, version, earlier.Revision, held.IsFinal || (held.IsRetracted && delivery.ServerId is null), held.IsRetracted)
-                    : Became.NoVersion;
+                return Adopted(earlier.Revision, held.IsFinal || (held.IsRetracted && delivery.ServerId is null));
             default:
                 return delivery.Tries < Patience ? new Became.Again(null)
                     : held.IsRetracted ? new Became.Withdrawn()
                     : new Became.Parked("foreign-edit", "The result was changed at the server by somebody else.");
         }
+
+        Became Adopted(int revision, bool final) =>
+            held.Version is { } version ? new Became.Adopted(id, version, revision, final, held.IsRetracted) : Became.NoVersion;
     }
 }
