@@ -24,5 +24,5 @@ public sealed class DeriveCommandTests
     }
 
     private static string Gas(string id, string subject) =>
-        $$"""{"resourceType":"Observation","id":"{{id}}","status":"final",{{subject}}"code":{"coding":[{"system":"http://loinc.org","code":"2703-7"}]},"effectiveDateTime":"2026-03-01T08:00:00Z","valueQuantity":{"value":80,"system":"http://unitsofmeasure.org","code":"mm[Hg]"}}""";
+        $$$"""{"resourceType":"Observation","id":"{{{id}}}","status":"final",{{{subject}}}"code":{"coding":[{"system":"http://loinc.org","code":"2703-7"}]},"effectiveDateTime":"2026-03-01T08:00:00Z","valueQuantity":{"value":80,"system":"http://unitsofmeasure.org","code":"mm[Hg]"}}""";
 }
