@@ -11,7 +11,7 @@ namespace RespDerive.Service.Tests;
 /// <summary>A FHIR endpoint in memory and the service beside it, in this process, speaking HTTP with each other.</summary>
 internal sealed class Bench : IAsyncDisposable
 {
-    private readonly DirectoryInfo _folder = Directory.CreateTempSubdirectory("respderive-bench-");
+    private readonly DirectoryInfo _folder = Directory.CreateDirectory(Path.Combine(AppContext.BaseDirectory, "benches", Guid.NewGuid().ToString("N")));
     private readonly Dictionary<string, string?> _settings;
     private WebApplication? _service;
 

@@ -43,6 +43,26 @@ public sealed class IntakeTests
     }
 
     [Fact]
+    public async Task Notifications_that_come_twice_count_once()
+    {
+        await using var bench = await Bench.StartAsync();
+        bench.Sandbox.Faults.DuplicateNextNotifications(3);
+        await AssertRatioAsync(bench, () => bench.Fhir.PutAsync);
+        await bench.IdleAsync();
+        Assert.Equal((3, 3), (bench.Store.Counts().Received, bench.Store.Counts().Repeats));
+        Assert.Equal("1", (await bench.ResultAsync("p", "pf-ratio", _ => true)).Version());
+    }
+
+    [Fact]
+    public async Task Notifications_that_are_lost_are_made_up_for_by_the_poll()
+    {
+        await using var bench = await Bench.StartAsync(("Intake:PollEvery", "00:00:00.5"));
+        bench.Sandbox.Faults.DropNextNotifications(3);
+        await AssertRatioAsync(bench, () => bench.Fhir.PutAsync);
+        Assert.Equal(3, bench.Sandbox.Notifications.Dropped);
+    }
+
+    [Fact]
     public async Task Our_own_output_coming_back_is_dropped()
     {
         await using var bench = await Bench.StartAsync();

@@ -69,15 +69,17 @@ public sealed class LifecycleTests
     }
 
     [Fact]
-    public async Task Same_content_sent_again_changes_nothing()
+    public async Task New_version_with_the_same_value_renews_the_evidence_and_an_unrelated_reading_nothing()
     {
         await using var bench = await PublishedAsync();
-        await RatioAsync(bench, _ => true);
-        await bench.Fhir.PutAsync(Some.FiO2("fio2", "p", 40, Drawn.AddMinutes(-60)));
         await bench.Fhir.PutAsync(Some.Observation("pulse", "p", "8867-4", 88, "/min", Drawn));
+        await bench.Fhir.PutAsync(Some.FiO2("fio2", "p", 40, Drawn.AddMinutes(-60)));
         await Until.True(() => bench.Store.Counts().Received == 5, "both taken");
         await bench.IdleAsync();
-        Assert.Equal(2, (await bench.Fhir.ProvenancesAsync(await RatioAsync(bench, _ => true))).Count);
+        var renewed = await RatioAsync(bench, _ => true);
+        Assert.Equal(200, renewed.Value());
+        Assert.Equal(["Observation/fio2/_history/2", "Observation/gas/_history/1"], renewed.DerivedFrom());
+        await AssertEditionsAsync(bench, "CREATE", "UPDATE");
     }
 
     private static async Task<Bench> PublishedAsync()

@@ -31,7 +31,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
         if (edition.IsRetraction)
         {
             observation.DataAbsentReason = new CodeableConcept(Vocabulary.DataAbsentReason, "error", "Error", null);
-            observation.Note = [new Annotation { Text = new Markdown("Withdrawn: the value published before no longer stands. " + Reason(edition)) }];
+            observation.Note = [new Annotation { Text = new Markdown(Reason(edition)) }];
             return observation;
         }
 
@@ -175,6 +175,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
     /// <summary>What a reader of a plain list needs beside the value.</summary>
     private static string Aside(UsedInput input) => input switch
     {
+        { Assumed: true } when input.Kind == Kinds.BarometricPressure.Key => " (site policy)",
         { Assumed: true } => " (assumed)",
         { GapMinutes: <= -1 and { } before } => $" ({Minutes(-before)} min before)",
         { GapMinutes: >= 1 and { } after } => $" ({Minutes(after)} min after)",
@@ -185,7 +186,9 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
 
     private string Name(string kind) => Kinds.Find(kind)?.Name ?? catalogue.Find(kind)?.Result.Name ?? kind;
 
-    private static string Reason(Edition edition) => edition.Withheld is { } code ? Withheld.Text(code) : "A value it rested on was withdrawn or replaced.";
+    private static string Reason(Edition edition) => edition.IsSecondCopy
+        ? "Withdrawn: a second copy of one result; the other copy stands."
+        : "Withdrawn: the value published before no longer stands. " + (edition.Withheld is { } code ? Withheld.Text(code) : "A value it rested on was withdrawn or replaced.");
 
     private static string Capital(string text) => text.Length == 0 ? text : char.ToUpperInvariant(text[0]) + text[1..];
 }

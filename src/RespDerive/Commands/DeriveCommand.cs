@@ -1,5 +1,6 @@
 using System.CommandLine;
 using System.CommandLine.Invocation;
+using System.CommandLine.Parsing;
 using System.Globalization;
 using System.Text.Json.Nodes;
 using RespDerive.Fhir;
@@ -36,7 +37,7 @@ internal static class DeriveCommand
         var pressure = new Option<double?>("--pressure") { Description = "Barometric pressure.", HelpName = "mm[Hg]" };
         var altitude = new Option<double?>("--altitude") { Description = "Altitude, for pressure by the standard atmosphere.", HelpName = "m" };
         var source = new Option<string>("--source") { Description = "Name of the system of record.", DefaultValueFactory = _ => new SourceOptions().Name };
-        var address = new Option<Uri?>("--base") { Description = "Service base of the source, named in the evidence.", HelpName = "URL" };
+        var address = new Option<Uri?>("--base") { Description = "Service base of the source, named in the evidence.", HelpName = "URL", CustomParser = Address };
         var site = new Option<string>("--site") { Description = "Name of the site.", DefaultValueFactory = _ => new ServiceOptions().Site };
         var codes = new Option<string?>("--code-map") { Description = "Code map of the site (CSV).", HelpName = "FILE" };
         var modes = new Option<string?>("--mode-map") { Description = "Modes of the site (CSV).", HelpName = "FILE" };
@@ -70,6 +71,17 @@ internal static class DeriveCommand
             return RunAsync(request, parsed.InvocationConfiguration, cancel);
         });
         return command;
+    }
+
+    private static Uri? Address(ArgumentResult result)
+    {
+        if (Uri.TryCreate(result.Tokens[0].Value, UriKind.Absolute, out var address) && address.Scheme is "http" or "https")
+        {
+            return address;
+        }
+
+        result.AddError("--base must be an absolute http or https address, such as https://ehr.example/fhir.");
+        return null;
     }
 
     private static async Task<int> RunAsync(Request request, InvocationConfiguration streams, CancellationToken cancel)
