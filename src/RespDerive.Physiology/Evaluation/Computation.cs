@@ -23,6 +23,9 @@ public sealed record Computation
     /// <summary>Method variant; null for the plain method.</summary>
     public string? Variant { get; init; }
 
+    /// <summary>The band of a coded result, whose <see cref="Value"/> is the index of its code and which has neither unit nor uncertainty of its own; null for a number.</summary>
+    public Placement? Placement { get; init; }
+
     /// <summary>Reason for withholding; null when there is a value.</summary>
     public string? Withheld { get; init; }
 
@@ -53,6 +56,11 @@ public sealed record Computation
             return new Computation { Withheld = Physiology.Withheld.Impossible };
         }
 
+        if (definition is Classification classification)
+        {
+            return Placed(classification, steps, roots);
+        }
+
         var (uncertainty, shares) = Budget.Of(roots, formula);
         if (!double.IsFinite(uncertainty) || uncertainty > definition.GreatestRelativeUncertainty * Math.Abs(value))
         {
@@ -67,6 +75,29 @@ public sealed record Computation
             Shares = shares,
             Flags = FlagsOf(definition, steps, roots, value),
             Variant = steps.Select(step => step.Option.Variant).FirstOrDefault(variant => variant is not null),
+        };
+    }
+
+    private static Computation Placed(Classification definition, Step[] steps, Roots roots)
+    {
+        var criterion = definition.CriterionFor(roots);
+        var number = criterion.Of(roots);
+        if (IsImpossible(criterion.Number.Result, number))
+        {
+            return new Computation { Withheld = Physiology.Withheld.Impossible };
+        }
+
+        var (uncertainty, shares) = Budget.Of(roots, criterion.Of);
+        var posted = Publication.Round(number, criterion.Number.Decimals);
+        var code = criterion.Code(posted);
+        var flags = FlagsOf(definition, steps, roots, 0);
+        return new Computation
+        {
+            Value = definition.Result.Codes.ToList().IndexOf(code),
+            Placement = new Placement(criterion, code, posted, uncertainty, criterion.Bands(number, uncertainty)),
+            Shares = shares,
+            Flags = criterion.Straddles(number, uncertainty) ? [.. flags.Append(Physiology.Flags.BandUncertain).Order(StringComparer.Ordinal)] : flags,
+            Variant = criterion.Name,
         };
     }
 
