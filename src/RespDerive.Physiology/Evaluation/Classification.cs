@@ -44,7 +44,8 @@ public sealed record Criterion(string Name, Definition Number, IReadOnlyList<str
     /// <param name="uncertainty">Standard uncertainty.</param>
     public IReadOnlyList<Band> Bands(double number, double uncertainty)
     {
-        var below = Edges().Select(edge => Normal.Below((edge - number) / uncertainty)).Append(1).ToArray();
+        var spread = Math.Max(uncertainty, double.Epsilon);
+        var below = Edges().Select(edge => Normal.Below((edge - number) / spread)).Append(1).ToArray();
         return [.. Codes.Select((code, i) => new Band(code, below[i] - (i == 0 ? 0 : below[i - 1])))];
     }
 

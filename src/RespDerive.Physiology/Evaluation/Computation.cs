@@ -43,7 +43,9 @@ public sealed record Computation
         reasons.AddRange(roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode));
 
         // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
-        reasons.AddRange(Tripped(definition, reasons.Count == 0 ? roots : new Roots(roots.All.Where(root => !IsNonsense(root)))));
+        var sound = reasons.Count == 0 ? roots : new Roots(roots.All.Where(root => !IsNonsense(root)));
+        reasons.AddRange(Tripped(definition, sound));
+        missing.AddRange(definition.Gates.Where(gate => gate.Code == Physiology.Withheld.InputMissing && gate.Trips(sound)).Select(gate => gate.Text));
         if (reasons.Count > 0)
         {
             return new Computation { Withheld = reasons.MinBy(Physiology.Withheld.Rank), Missing = missing };

@@ -24,19 +24,20 @@ public static class BloodSlots
     public static readonly Slot Hemoglobin = new(Kinds.Hemoglobin.Name,
         [new Option(Kinds.Hemoglobin, Same), new Option(Kinds.Hemoglobin, new Pairing.Nearest(TimeSpan.FromHours(6), TimeSpan.Zero))]);
 
-    /// <summary>Haemoglobin that cannot bind oxygen: measured, else taken as none.</summary>
+    /// <summary>Haemoglobin that cannot bind oxygen: measured; what is not measured is taken as none.</summary>
     public static readonly Slot Dyshemoglobin = new("carboxy- and methaemoglobin",
         [
             new Option([new Term(Kinds.Carboxyhemoglobin, Same), new Term(Kinds.Methemoglobin, Same)]),
-            new Option(Kinds.NoDyshemoglobin, Constant, Flags.DyshemoglobinUnknown, Flags.DyshemoglobinUnknown),
+            Unmeasured(new Term(Kinds.Carboxyhemoglobin, Same)),
+            Unmeasured(new Term(Kinds.Methemoglobin, Same)),
+            Unmeasured(),
         ]);
 
     /// <summary>Arterial oxyhaemoglobin: the fraction of a CO-oximeter, else the saturation less what cannot bind oxygen.</summary>
     public static readonly Slot ArterialSaturation = new("arterial oxygen saturation",
         [
             new Option(Kinds.FractionalOxyhemoglobin, Same),
-            new Option([new Term(Kinds.SaO2, Same), new Term(Kinds.Carboxyhemoglobin, Same), new Term(Kinds.Methemoglobin, Same)]),
-            new Option([new Term(Kinds.SaO2, Same), new Term(Kinds.NoDyshemoglobin, Constant)], Flags.DyshemoglobinUnknown, Flags.DyshemoglobinUnknown),
+            .. Dyshemoglobin.Options.Select(option => option with { Terms = [new Term(Kinds.SaO2, Same), .. option.Terms] }),
         ]) { Alternatives = true };
 
     /// <summary>Hüfner number of the definition.</summary>
@@ -44,6 +45,9 @@ public static class BloodSlots
 
     /// <summary>Solubility of the definition.</summary>
     public static readonly Slot Solubility = new(Kinds.OxygenSolubility, Constant);
+
+    private static Option Unmeasured(params Term[] measured) =>
+        new([.. measured, new Term(Kinds.NoDyshemoglobin, Constant)], Flags.DyshemoglobinUnknown, Flags.DyshemoglobinUnknown);
 
     /// <summary>Share of haemoglobin that can bind oxygen.</summary>
     public static double Active(Roots x) => 1 - (x[Dyshemoglobin] / 100);

@@ -95,6 +95,7 @@ public static class Kinds
     public static readonly Kind ExpectedGradientRule = Kind.Coded("expected-gradient-rule", "rule", "rule of prediction", Constant, "age/4+4", "(age+10)/4", "2.5+0.21*age");
     public static readonly Kind NoAltitudeCorrection = Kind.Quantity("altitude-correction-none", "kalt", "altitude correction, when the barometric pressure is not known", Constant, "1", 1, 1, Tolerance.None, assumed: 1);
     public static readonly Kind OxygenationCriteria = Kind.Coded("oxygenation-criteria", "criteria", "set of criteria", Constant, "berlin-2012", "global-2023", "global-2023-limited-resources");
+    public static readonly Kind SupportNotStated = Kind.Taken("respiratory-support-not-stated", "support_not_stated", "respiratory support, not stated", Constant, "not stated");
     public static readonly Kind HighFlowTaken = Kind.Taken("respiratory-support-taken", "support_taken", "respiratory support, taken on trust", Constant, "high-flow oxygen");
 
     // circumstances that only gates look at

@@ -31,7 +31,7 @@ public sealed class ArdsOxygenationBand : Classification
 
     private static readonly Slot Peep = new("PEEP", [new Option(Kinds.PeepSet, new Pairing.InForce()), new Option(Kinds.Peep, new Pairing.Nearest(Near, Near))]);
 
-    private static readonly Slot Support = new("PEEP or kind of respiratory support", [.. Peep.Options, new Option(Kinds.Support, new Pairing.InForce())]);
+    private static readonly Slot Support = new("PEEP or kind of respiratory support", [.. Peep.Options, new Option(Kinds.Support, new Pairing.InForce()), new Option(Kinds.SupportNotStated, new Pairing.ByHand())]);
 
     private static readonly Slot Altitude = new("barometric pressure",
         [new Option(Kinds.BarometricPressure, new Pairing.Site(TimeSpan.FromHours(6))), new Option(Kinds.NoAltitudeCorrection, new Pairing.Site(TimeSpan.Zero))]);
@@ -84,7 +84,7 @@ public sealed class ArdsOxygenationBand : Classification
         new Gate(Withheld.Fio2Estimated, "FiO2 of low-flow oxygen is an estimate", [Kinds.Support], x => x.Code(Kinds.Support) == "low-flow oxygen" && NameFor(x) != LimitedResources,
             ("SF", 240, "%"), ("SpO2", 92, "%"), ("support", "low-flow oxygen")),
         new Gate(Withheld.PeepBelowMinimum, "no PEEP of at least 5 cm[H2O]", [Kinds.Support], WithoutPeep, ("PF", 150, "mm[Hg]"), ("PEEP", 3, "cm[H2O]")),
-        new Gate(Withheld.Spo2Above97, "the S/F ratio is of an SpO2 above 97 %", [], x => UsesSf(x) && x.Has(Kinds.SpO2) && x[Kinds.SpO2] > 97,
+        new Gate(Withheld.Spo2Above97, "the S/F ratio is of an SpO2 above 97 %", [], SaturationTooHigh,
             ("SF", 240, "%"), ("SpO2", 99, "%"), ("support", Intubated)),
     ];
 
@@ -141,12 +141,15 @@ public sealed class ArdsOxygenationBand : Classification
 
     private static bool UsesSf(Roots x) => !x.Has(Pf) || x.Code(Kinds.OxygenationCriteria) == LimitedResources;
 
-    private static bool Incomplete(Roots x) => x.Has(Ratio) && NameFor(x) switch
+    /// <summary>Beside an SpO2 that forbids the S/F ratio anyway nothing else is asked for.</summary>
+    private static bool Incomplete(Roots x) => x.Has(Ratio) && !SaturationTooHigh(x) && NameFor(x) switch
     {
         Berlin => !x.Has(Pf) || !x.Has(Peep),
         LimitedResources => !Sf.Complete(x),
         _ => !x.Has(Kinds.Support),
     };
+
+    private static bool SaturationTooHigh(Roots x) => UsesSf(x) && x.Has(Kinds.SpO2) && x[Kinds.SpO2] > 97;
 
     private static bool WithoutPeep(Roots x) => NameFor(x) != LimitedResources && x.Code(Kinds.Support) != "high-flow oxygen"
         && (x.Code(Kinds.Support) == "none" || (x.Has(Peep) && x[Peep] < 5));

@@ -73,7 +73,7 @@ public sealed class PardsSeverityBand : Classification
     public override IReadOnlyList<Vector> Vectors =>
     [
         new(Evidence.Published, "PALICC 2015: an oxygenation index of 8 is moderate", 2, 0, ("OI", 8, "1")),
-        new(Evidence.Published, "PALICC 2015: an oxygen saturation index of 12.3 is severe", 3, 0, ("OSI", 12.3, "1"), ("SpO2", 95, "%"), ("support", "invasive ventilation")),
+        new(Evidence.Published, "PALICC 2015: an oxygen saturation index of 12.3 is severe", 3, 0, ("OSI", 12.3, "1"), ("SpO2", 95, "%")),
         new(Evidence.Published, "PALICC 2015: 100·0.6·15/60 = 15 is moderate", 2, 0, ("FiO2", 0.6, "1"), ("Pmean", 15, "cm[H2O]"), ("PaO2", 60, "mm[Hg]")),
     ];
 
