@@ -36,6 +36,14 @@ public sealed class BandTests
     }
 
     [Fact]
+    public void Two_ratios_at_hand_are_no_contradiction_and_the_blood_gas_counts()
+    {
+        var placed = Ards(("PaO2", 75, "mm[Hg]"), ("FiO2", 0.5, "1"), ("SpO2", 94, "%"), ("PEEP", 8, "cm[H2O]"));
+        Assert.Equal(("moderate", 150m), (placed.Placement!.Code, placed.Placement.Posted));
+        Assert.Throws<UnusableRequestException>(() => Ards(("PF", 150, "mm[Hg]"), ("PaO2", 75, "mm[Hg]"), ("FiO2", 0.5, "1"), ("PEEP", 8, "cm[H2O]")));
+    }
+
+    [Fact]
     public void Criteria_that_are_named_do_not_fall_back() =>
         Assert.Equal(Withheld.InputMissing, Ards(("SF", 200, "%"), ("SpO2", 94, "%"), ("PEEP", 8, "cm[H2O]"), ("criteria", "berlin-2012")).Withheld);
 

@@ -6,6 +6,10 @@ namespace RespDerive.Physiology;
 /// A definition whose result is a code: the band of a named criterion in which a posted number lies. The code comes from the rounded number
 /// that is or would be posted, never from the unrounded one. A band is of the criterion, not a diagnosis; it runs only where the site names it.
 /// </summary>
+/// <remarks>
+/// <see cref="Computation.Placement"/> holds the result; a host publishes its code as the value, <see cref="Text"/> as the display, the criterion
+/// as the method variant, and neither unit nor uncertainty.
+/// </remarks>
 public abstract class Classification : Definition
 {
     /// <inheritdoc/>
