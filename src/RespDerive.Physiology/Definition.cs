@@ -20,6 +20,12 @@ public abstract class Definition
     /// <summary>Rises whenever the number changes; the old one stays beside it, frozen.</summary>
     public virtual int Revision => 1;
 
+    /// <summary>False for a lesser variant or a band, which runs only where the site names it.</summary>
+    public virtual bool OnByDefault => true;
+
+    /// <summary>True for a target, prediction or model value: computed on request, never called for by the record.</summary>
+    public virtual bool ByHandOnly => false;
+
     /// <summary>Heading under which the catalogue lists it.</summary>
     public abstract string Purpose { get; }
 

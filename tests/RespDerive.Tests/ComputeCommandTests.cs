@@ -128,6 +128,31 @@ public sealed class ComputeCommandTests
     }
 
     [Fact]
+    public async Task A_coded_result_has_a_code_with_its_text_and_the_probability_of_each_band()
+    {
+        var (code, output, _) = await Cli.RunAsync("compute", "ards-oxygenation-band", "PF=205", "PEEP=8", "PB=760", "-o", "json");
+        var answer = JsonNode.Parse(output)!.AsObject();
+        Assert.Equal(Exit.Ok, code);
+        Assert.Equal("mild", (string)answer["value"]!["code"]!);
+        Assert.Equal("Oxygenation criterion: mild band", (string)answer["value"]!["text"]!);
+        Assert.All(["published", "unit", "uncertainty", "withheld"], member => Assert.Null(answer[member]));
+        Assert.Equal(["severe", "moderate", "mild", "none"], answer["bands"]!.AsArray().Select(band => (string)band!["code"]!));
+
+        var text = (await Cli.RunAsync("compute", "ards-oxygenation-band", "PF=205", "PEEP=8", "PB=760")).Output;
+        Assert.Contains("by berlin-2012 from PF = 205 mm[Hg] ± 14 mm[Hg]", text, StringComparison.Ordinal);
+        Assert.Contains("probability: moderate 38 %, mild 62 %", text, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public async Task A_withheld_band_has_no_bands()
+    {
+        var answer = JsonNode.Parse((await Cli.RunAsync("compute", "ards-oxygenation-band", "PF=205", "PEEP=3", "-o", "json")).Output)!.AsObject();
+        Assert.Equal("peep-below-minimum", (string)answer["withheld"]!["code"]!);
+        Assert.Null(answer["value"]);
+        Assert.False(answer.ContainsKey("bands"));
+    }
+
+    [Fact]
     public async Task Help_shows_examples()
     {
         Assert.Contains("compute pf-ratio \"pao2=90 mm[Hg]\" fio2=0.40", (await Cli.RunAsync("compute", "--help")).Output, StringComparison.Ordinal);

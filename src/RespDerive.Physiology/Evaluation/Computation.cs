@@ -23,6 +23,9 @@ public sealed record Computation
     /// <summary>Method variant; null for the plain method.</summary>
     public string? Variant { get; init; }
 
+    /// <summary>The band of a coded result, whose <see cref="Value"/> is the index of its code and which has neither unit nor uncertainty of its own; null for a number.</summary>
+    public Placement? Placement { get; init; }
+
     /// <summary>Reason for withholding; null when there is a value.</summary>
     public string? Withheld { get; init; }
 
@@ -40,7 +43,9 @@ public sealed record Computation
         reasons.AddRange(roots.All.Where(IsNonsense).Select(root => root.Kind.RangeCode));
 
         // Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.
-        reasons.AddRange(Tripped(definition, reasons.Count == 0 ? roots : new Roots(roots.All.Where(root => !IsNonsense(root)))));
+        var sound = reasons.Count == 0 ? roots : new Roots(roots.All.Where(root => !IsNonsense(root)));
+        reasons.AddRange(Tripped(definition, sound));
+        missing.AddRange(definition.Gates.Where(gate => gate.Code == Physiology.Withheld.InputMissing && gate.Trips(sound)).Select(gate => gate.Text));
         if (reasons.Count > 0)
         {
             return new Computation { Withheld = reasons.MinBy(Physiology.Withheld.Rank), Missing = missing };
@@ -51,6 +56,11 @@ public sealed record Computation
         if (IsImpossible(definition.Result, value) || steps.Any(step => !roots.Has(step.Kind) && IsImpossible(step.Kind, step.Kind.Formula!(roots))))
         {
             return new Computation { Withheld = Physiology.Withheld.Impossible };
+        }
+
+        if (definition is Classification classification)
+        {
+            return Placed(classification, steps, roots);
         }
 
         var (uncertainty, shares) = Budget.Of(roots, formula);
@@ -67,6 +77,29 @@ public sealed record Computation
             Shares = shares,
             Flags = FlagsOf(definition, steps, roots, value),
             Variant = steps.Select(step => step.Option.Variant).FirstOrDefault(variant => variant is not null),
+        };
+    }
+
+    private static Computation Placed(Classification definition, Step[] steps, Roots roots)
+    {
+        var criterion = definition.CriterionFor(roots);
+        var number = criterion.Of(roots);
+        if (IsImpossible(criterion.Number.Result, number))
+        {
+            return new Computation { Withheld = Physiology.Withheld.Impossible };
+        }
+
+        var (uncertainty, shares) = Budget.Of(roots, criterion.Of);
+        var posted = Publication.Round(number, criterion.Number.Decimals);
+        var code = criterion.Code(posted);
+        var flags = FlagsOf(definition, steps, roots, 0);
+        return new Computation
+        {
+            Value = definition.Result.Codes.ToList().IndexOf(code),
+            Placement = new Placement(criterion, code, posted, uncertainty, criterion.Bands(number, uncertainty)),
+            Shares = shares,
+            Flags = criterion.Straddles(number, uncertainty) ? [.. flags.Append(Physiology.Flags.BandUncertain).Order(StringComparer.Ordinal)] : flags,
+            Variant = criterion.Name,
         };
     }
 

@@ -19,6 +19,11 @@ public static class Flags
     public const string OrderUnknown = "order-unknown";
     public const string SpecimenUnread = "specimen-unread";
     public const string OtherDevice = "other-device";
+    public const string DyshemoglobinUnknown = "dyshaemoglobin-unknown";
+    public const string VenousTensionAssumed = "venous-tension-assumed";
+    public const string SupportUnconfirmed = "support-unconfirmed";
+    public const string AltitudeUnknown = "altitude-unknown";
+    public const string BandUncertain = "band-uncertain";
 #pragma warning restore CS1591
 
     private static readonly Dictionary<string, string> Lines = new(StringComparer.Ordinal)
@@ -38,6 +43,11 @@ public static class Flags
         [OrderUnknown] = "The source gave neither version nor time of change; arrival order decided.",
         [SpecimenUnread] = "The specimen named by the source could not be read.",
         [OtherDevice] = "The inputs come from different devices.",
+        [DyshemoglobinUnknown] = "Carboxy- and methaemoglobin were not measured and are taken as none.",
+        [VenousTensionAssumed] = "The mixed venous oxygen tension was not measured; its small part of the content is assumed.",
+        [SupportUnconfirmed] = "The kind of respiratory support was taken on trust.",
+        [AltitudeUnknown] = "The barometric pressure is not known, so there is no correction for altitude.",
+        [BandUncertain] = "A cut-point lies within two standard uncertainties: a neighbouring band is possible.",
     };
 
     /// <summary>All flags with their line.</summary>

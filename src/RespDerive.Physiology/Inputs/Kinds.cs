@@ -12,13 +12,44 @@ public static class Kinds
     private const string Judgement = "own judgement";
     private static readonly Tolerance Pressure = Tolerance.Limit(2, 0.04, Ventilator, zero: true);
     private static readonly Tolerance Volume = Tolerance.Limit(4, 0.15, Ventilator);
+    private static readonly Tolerance CoOximeter = Tolerance.Limit(1.5, 0, "CO-oximeter ±1 to 2 % (from memory)");
     private static readonly Tolerance Rate = Tolerance.Limit(1, 0, Judgement + ": displayed integer");
 
     // blood gas
     public static readonly Kind PaO2 = Kind.Quantity("pao2", "PaO2", "arterial oxygen partial pressure", Laboratory, "mm[Hg]", 10, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
-    public static readonly Kind Po2 = Kind.Quantity("po2-unspecified", "PO2", "oxygen partial pressure, site of sample unspecified", Laboratory, "mm[Hg]", 5, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
+    public static readonly Kind Po2 = Kind.Quantity("po2-unspecified", "PO2", "oxygen partial pressure, site of sample unspecified", Laboratory, "mm[Hg]", 0.5, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
     public static readonly Kind PaCO2 = Kind.Quantity("paco2", "PaCO2", "arterial carbon dioxide partial pressure", Laboratory, "mm[Hg]", 5, 200, Tolerance.Deviation(1, 0.025, "analyser quality control, from memory; worst case ±5 mm[Hg]"));
     public static readonly Kind Pco2 = Kind.Quantity("pco2-unspecified", "PCO2", "carbon dioxide partial pressure, site of sample unspecified", Laboratory, "mm[Hg]", 5, 200, Tolerance.Deviation(1, 0.025, "analyser quality control, from memory"));
+
+    public static readonly Kind PhArterial = Kind.Quantity("ph-arterial", "pH", "arterial pH", Laboratory, "[pH]", 6.6, 8, Tolerance.Deviation(0.01, 0, "analyser quality control, from memory; worst case ±0.04"));
+    public static readonly Kind SaO2 = Kind.Quantity("sao2", "SaO2", "arterial oxygen saturation", Laboratory, "%", 20, 100, CoOximeter);
+    public static readonly Kind FractionalOxyhemoglobin = Kind.Quantity("fo2hb", "FO2Hb", "oxyhaemoglobin, fraction of all haemoglobin", Laboratory, "%", 10, 100, CoOximeter);
+    public static readonly Kind So2 = Kind.Quantity("so2-unspecified", "SO2", "oxygen saturation, site of sample unspecified", Laboratory, "%", 5, 100, CoOximeter);
+    public static readonly Kind SvO2 = Kind.Quantity("svo2", "SvO2", "mixed venous oxygen saturation", Laboratory, "%", 10, 100, CoOximeter);
+    public static readonly Kind ScvO2 = Kind.Quantity("scvo2", "ScvO2", "central venous oxygen saturation", Laboratory, "%", 10, 100, CoOximeter);
+    public static readonly Kind PvO2 = Kind.Quantity("po2-mixed-venous", "PvO2", "mixed venous oxygen partial pressure", Laboratory, "mm[Hg]", 5, 200, Tolerance.Deviation(0, 0.05, GasAnalyser));
+    public static readonly Kind Hemoglobin = Kind.Quantity("hemoglobin", "Hb", "haemoglobin concentration", Laboratory, "g/dL", 2, 25, Tolerance.Limit(0, 0.04, "CLIA 2025 ±4 % (from memory)"));
+    public static readonly Kind Carboxyhemoglobin = Kind.Quantity("carboxyhemoglobin", "COHb", "carboxyhaemoglobin, fraction of all haemoglobin", Laboratory, "%", 0, 60, Tolerance.Limit(1, 0, Judgement));
+    public static readonly Kind Methemoglobin = Kind.Quantity("methemoglobin", "MetHb", "methaemoglobin, fraction of all haemoglobin", Laboratory, "%", 0, 60, Tolerance.Limit(1, 0, Judgement));
+
+    // constants of blood: part of the definition that uses them, named in its result
+    public static readonly Kind Huefner = Kind.Quantity("huefner", "huefner", "Hüfner number: oxygen bound by a gram of haemoglobin", Constant, "mL/g", 1.3, 1.4, Tolerance.None, assumed: 1.34);
+    public static readonly Kind OxygenSolubility = Kind.Quantity("oxygen-solubility", "alpha", "solubility of oxygen in blood", Constant, "mL/dL/mm[Hg]", 0.0025, 0.0035, Tolerance.None, assumed: 0.003);
+    public static readonly Kind NoDyshemoglobin = Kind.Quantity("dyshemoglobin", "dysHb", "carboxy- and methaemoglobin together, when not measured", Constant, "%", 0, 60, Tolerance.Limit(2, 0, "usual sum in a non-smoker, own judgement"), assumed: 0);
+    public static readonly Kind VenousTensionGuess = Kind.Quantity("po2-mixed-venous-guess", "PvO2guess", "mixed venous oxygen partial pressure, when not measured", Constant, "mm[Hg]", 20, 60, Tolerance.Limit(15, 0, Judgement + ": 40 ± 15 mm[Hg], which is ± 0.05 mL/dL"), assumed: 40);
+    public static readonly Kind ArteriovenousGuess = Kind.Quantity("arteriovenous-oxygen-difference-guess", "assumed_avDO2", "arteriovenous oxygen content difference, assumed", Constant, "mL/dL", 1, 8, Tolerance.Limit(1, 0, Judgement + ": 3.5 in stable critical illness, 5 in health"), assumed: 3.5);
+    public static readonly Kind EndCapillarySaturation = Kind.Quantity("so2-end-capillary", "ScO2", "end-capillary oxygen saturation", Constant, "%", 50, 100, Tolerance.Deviation(0.5, 0, Judgement));
+    public static readonly Kind StandardPh = Kind.Quantity("standard-ph", "pHstd", "standard pH of the dissociation curve", Constant, "[pH]", 7.4, 7.4, Tolerance.None, assumed: 7.4);
+    public static readonly Kind StandardPco2 = Kind.Quantity("standard-pco2", "PCO2std", "standard carbon dioxide partial pressure of the dissociation curve", Constant, "mm[Hg]", 40, 40, Tolerance.None, assumed: 40);
+    public static readonly Kind GasTemperature = Kind.Quantity("gas-temperature", "Tgas", "temperature at which the gas tensions were measured", Constant, "Cel", 15, 42, Tolerance.None, assumed: 37);
+    public static readonly Kind Diphosphoglycerate = Kind.Quantity("dpg", "DPG", "2,3-diphosphoglycerate in blood", Constant, "mmol/L", 0.5, 12, Tolerance.Limit(1, 0, Judgement), assumed: 4.65);
+    public static readonly Kind KelmanP50 = Kind.Quantity("kelman-p50", "P50blood", "half-saturation tension of the blood on the Kelman curve", Constant, "mm[Hg]", 10, 60, Tolerance.Deviation(0.5, 0, Judgement), assumed: 26.8);
+    public static readonly Kind StandardP50 = Kind.Quantity("standard-p50", "P50std", "half-saturation tension of the standard curve", Constant, "mm[Hg]", 24, 30, Tolerance.None, assumed: SeveringhausCurve.P50);
+    public static readonly Kind SeveringhausMisfit = Misfit("severinghaus-misfit", "dSsev", "Severinghaus", 0.55, "greatest error stated by Severinghaus 1979");
+    public static readonly Kind KelmanMisfit = Misfit("kelman-misfit", "dSkel", "Kelman", 0.3, "greatest distance from table 1 of Severinghaus 1979 above 50 mm[Hg]; below, up to 2.2 %");
+    public static readonly Kind DashMisfit = Misfit("dash-misfit", "dSdash", "Dash", 0.61, "greatest distance from table 1 of Severinghaus 1979");
+    public static readonly Kind SiggaardAndersenMisfit = Misfit("siggaard-andersen-misfit", "dSsa", "Siggaard-Andersen", 0.42, "greatest distance from table 1 of Severinghaus 1979");
+    public static readonly Kind DissociationCurve = Kind.Coded("dissociation-curve", "model", "dissociation curve", Constant, "severinghaus");
 
     // oxygen
     public static readonly Kind FiO2Measured = Kind.Quantity("fio2-measured", "FiO2meas", "inspired oxygen fraction, measured", Measurement, "1", 0.205, 1, Tolerance.Limit(0.025, 0.025, OxygenMonitor), Withheld.Fio2UnitImplausible);
@@ -50,6 +81,8 @@ public static class Kinds
     public static readonly Kind RespiratoryRate = Kind.Quantity("respiratory-rate", "RRvital", "respiratory rate", Measurement, "/min", 2, 120, Rate);
     public static readonly Kind FlowSet = Kind.Quantity("inspiratory-flow-set", "flow", "inspiratory flow, set", Setting, "L/min", 1, 200, Tolerance.Limit(0, 0.1, Judgement));
 
+    public static readonly Kind CardiacOutput = Kind.Quantity("cardiac-output", "CO", "cardiac output", Measurement, "L/min", 0.5, 30, Tolerance.Deviation(0, 0.07, "thermodilution in triplicate ±10 to 15 % (from memory)"));
+
     // patient, site
     public static readonly Kind Height = Kind.Quantity("height", "height", "body height", Demographic, "cm", 140, 210, Tolerance.Limit(1, 0, "measured height, own judgement"), Withheld.HeightOutOfRange);
     public static readonly Kind Sex = Kind.Coded("sex", "sex", "sex used by the formula", Demographic, "female", "male", "unknown");
@@ -57,6 +90,13 @@ public static class Kinds
     public static readonly Kind BarometricPressure = Kind.Quantity("barometric-pressure", "PB", "barometric pressure", Constant, "mm[Hg]", 240, 800, Tolerance.Limit(0.75, 0, "barometer ±1 hPa, own judgement"));
     public static readonly Kind WaterVapour = Kind.Quantity("water-vapour-pressure", "PH2O", "water vapour pressure in the airways", Constant, "mm[Hg]", 40, 55, Tolerance.None, assumed: 47);
     public static readonly Kind RespiratoryQuotient = Kind.Quantity("respiratory-quotient", "R", "respiratory exchange ratio", Constant, "1", 0.6, 1.2, Tolerance.Limit(0.1, 0, "assumed 0.8 ± 0.1, own judgement"), assumed: 0.8);
+
+    public static readonly Kind PopulationSpread = Kind.Quantity("population-spread", "spread", "distance of one healthy person from the prediction", Constant, "mm[Hg]", -25, 25, Tolerance.Deviation(7, 0, "spread of the reference population (from memory)"), assumed: 0);
+    public static readonly Kind ExpectedGradientRule = Kind.Coded("expected-gradient-rule", "rule", "rule of prediction", Constant, "age/4+4", "(age+10)/4", "2.5+0.21*age");
+    public static readonly Kind NoAltitudeCorrection = Kind.Quantity("altitude-correction-none", "kalt", "altitude correction, when the barometric pressure is not known", Constant, "1", 1, 1, Tolerance.None, assumed: 1);
+    public static readonly Kind OxygenationCriteria = Kind.Coded("oxygenation-criteria", "criteria", "set of criteria", Constant, "berlin-2012", "global-2023", "global-2023-limited-resources");
+    public static readonly Kind SupportNotStated = Kind.Taken("respiratory-support-not-stated", "support_not_stated", "respiratory support, not stated", Constant, "not stated");
+    public static readonly Kind HighFlowTaken = Kind.Taken("respiratory-support-taken", "support_taken", "respiratory support, taken on trust", Constant, "high-flow oxygen");
 
     // circumstances that only gates look at
     public static readonly Kind Sample = Kind.Coded("sample", "sample", "site of the blood sample", Circumstance, "arterial", "venous", "central venous", "mixed venous", "capillary", "unknown");
@@ -76,6 +116,10 @@ public static class Kinds
 
     /// <summary>A kind of this list by key; null when there is none.</summary>
     public static Kind? Find(string key) => ByKey.GetValueOrDefault(key);
+
+    /// <summary>A root of value zero that carries the error of a dissociation curve into the uncertainty.</summary>
+    private static Kind Misfit(string key, string symbol, string curve, double limit, string source) =>
+        Kind.Quantity(key, symbol, $"misfit of the {curve} curve", Constant, "%", -3, 3, Tolerance.Limit(limit, 0, source), assumed: 0);
 
     private static readonly Dictionary<string, Kind> ByKey = All.ToDictionary(kind => kind.Key, StringComparer.Ordinal);
 }

@@ -78,6 +78,9 @@ public sealed record Slot(string Name, IReadOnlyList<Option> Options, string Mis
     {
     }
 
+    /// <summary>True when the options are different quantities of which the first at hand counts; giving several is then no contradiction.</summary>
+    public bool Alternatives { get; init; }
+
     /// <summary>Every kind that may fill the slot.</summary>
     public IEnumerable<Kind> Kinds => Options.SelectMany(option => option.Terms).SelectMany(term => term.AnyOf).Distinct();
 

@@ -90,6 +90,29 @@ public static class Ucum
         // volume per body mass, in mL/kg
         ["mL/kg"] = new("volume per mass", 1m),
         ["L/kg"] = new("volume per mass", 1000m),
+        // pressure over pressure, in mm[Hg]/cm[H2O]
+        ["mm[Hg]/cm[H2O]"] = new("pressure over airway pressure", 1m),
+        ["kPa/cm[H2O]"] = new("pressure over airway pressure", 1m / 0.133322m),
+        // pH
+        ["[pH]"] = new("pH", 1m),
+        // mass concentration, in g/L
+        ["g/L"] = new("mass concentration", 1m),
+        ["g/dL"] = new("mass concentration", 10m),
+        ["mg/mL"] = new("mass concentration", 1m),
+        // amount concentration, in mmol/L
+        ["mmol/L"] = new("amount concentration", 1m),
+        ["mol/L"] = new("amount concentration", 1000m),
+        ["umol/L"] = new("amount concentration", 0.001m),
+        // gas in blood, in mL/dL
+        ["mL/dL"] = new("gas content", 1m),
+        ["mL/L"] = new("gas content", 0.1m),
+        // gas bound by mass, in mL/g
+        ["mL/g"] = new("gas capacity", 1m),
+        // solubility of a gas, in mL/dL/mm[Hg]
+        ["mL/dL/mm[Hg]"] = new("solubility", 1m),
+        ["mL/L/mm[Hg]"] = new("solubility", 0.1m),
+        ["mL/dL/kPa"] = new("solubility", 0.133322m),
+        ["mL/L/kPa"] = new("solubility", 0.0133322m),
         // temperature, in K
         ["K"] = new("temperature", 1m),
         ["Cel"] = new("temperature", 1m, 273.15m),

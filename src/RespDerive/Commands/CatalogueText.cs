@@ -37,12 +37,16 @@ internal static class CatalogueText
             .Append(definition.Key).Append(": ").Append(result.Name).Append("\n\n")
             .Append(Columns.Note("", definition.Summary, 0)).Append('\n')
             .Append(Columns.Note("Equation", definition.Equation))
-            .Append(Columns.Note("Unit", (result.Unit == "1" ? "none (1)" : result.Unit) + ", " + Plural(definition.Decimals, "decimal")))
+            .Append(definition is Classification bands ? Bands(bands) : Columns.Note("Unit", (result.Unit == "1" ? "none (1)" : result.Unit) + ", " + Plural(definition.Decimals, "decimal")))
             .Append(Columns.Note("Assumes", definition.Assumptions))
             .Append(Columns.Note("Caution", definition.Caution))
-            .Append(Columns.Note("Called for", CalledFor(definition.Calling)))
-            .Append(Columns.Note("Usual", Range(definition.Usual.Least, definition.Usual.Greatest, result.Unit) + "; outside, it is flagged"))
-            .Append(Columns.Note("Possible", Range(result.Least, result.Greatest, result.Unit) + "; outside, it is withheld"));
+            .Append(Columns.Note("Called for", CalledFor(definition)));
+        if (!result.IsCoded)
+        {
+            text.Append(Columns.Note("Usual", Range(definition.Usual.Least, definition.Usual.Greatest, result.Unit) + "; outside, it is flagged"))
+                .Append(Columns.Note("Possible", Range(result.Least, result.Greatest, result.Unit) + "; outside, it is withheld"));
+        }
+
         if (definition.GreatestRelativeUncertainty is { } greatest)
         {
             text.Append(Columns.Note("Certainty", $"withheld above a relative standard uncertainty of {Figures.Percent(greatest)}"));
@@ -71,7 +75,7 @@ internal static class CatalogueText
             text.Append("\nFlags\n").Append(string.Concat(flags.Select(flag => Columns.Note(flag, Flags.Text(flag), 24))));
         }
 
-        text.Append("\nWorked examples\n").Append(string.Concat(definition.Vectors.Select(vector => Columns.Note(Name(vector.Evidence), $"{vector.Source} ({Inputs(vector)} → {Figures.Plain(vector.Expected)}{Figures.Unit(result.Unit)})"))));
+        text.Append("\nWorked examples\n").Append(string.Concat(definition.Vectors.Select(vector => Columns.Note(Name(vector.Evidence), $"{vector.Source} ({Inputs(vector)} → {Expected(result, vector)})"))));
         return text.Append("\nSources\n").Append(string.Concat(definition.Citations.Select(citation => Columns.Note("", citation.Text + (citation.Doi is { } doi ? $" doi:{doi}" : ""), 0)))).ToString();
     }
 
@@ -97,9 +101,26 @@ internal static class CatalogueText
         }
     }
 
-    private static string CalledFor(Calling calling)
+    private static string Bands(Classification bands) =>
+        string.Concat(bands.Result.Codes.Select(code => Columns.Note("Code", $"{code}: {bands.Text(code)}")))
+        + string.Concat(bands.Criteria.Select(criterion => Columns.Note("Criterion",
+            $"{criterion.Name} by {criterion.Number.Result.Symbol}, rising: {Cuts(criterion)}; a cut-point itself belongs {(criterion.CutIsBelow ? "below" : "above")}")));
+
+    private static string Cuts(Criterion criterion) =>
+        string.Concat(criterion.Codes.Select((code, i) => i < criterion.Cuts.Count ? string.Create(CultureInfo.InvariantCulture, $"{code} | {criterion.Cuts[i]} | ") : code));
+
+    private static string Expected(Kind result, Vector vector) =>
+        result.IsCoded ? result.Codes[(int)vector.Expected] : Figures.Plain(vector.Expected) + Figures.Unit(result.Unit);
+
+    private static string CalledFor(Definition definition)
     {
-        var text = "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))
+        var calling = definition.Calling;
+        if (calling.Anchors.Count == 0)
+        {
+            return "never by a record; only by hand";
+        }
+
+        var text = (definition.OnByDefault ? "" : "only where the site names it; ") + "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))
             + (calling.Cadence == Cadence.QuarterHour ? "; the first in each quarter of an hour" : "; each, or the first in each quarter of an hour of a streamed signal");
         text += calling.OnlyWith.Count > 0 ? "; only when the patient's record of the last 24 h shows that it applies" : "";
         return text + (calling.NotWith.Count > 0 ? $"; not beside {string.Join(", ", calling.NotWith.Select(kind => kind.Name))}" : "");
