@@ -8,6 +8,8 @@ namespace RespDerive.Physiology;
 /// </summary>
 public abstract class Definition
 {
+    private Plan? _plan;
+
     /// <summary>The value as a kind: key, symbol, name, unit, hard limits, needs and formula.</summary>
     public abstract Kind Result { get; }
 
@@ -68,10 +70,9 @@ public abstract class Definition
     /// <summary>Symbols that mean another kind here than in the general vocabulary.</summary>
     public virtual IReadOnlyDictionary<string, Kind> Symbols => System.Collections.Immutable.ImmutableDictionary<string, Kind>.Empty;
 
-    /// <summary>The slots by which the value can be had from these roots: its own, else those of the identity.</summary>
-    internal IReadOnlyList<Slot> Path(Roots roots) =>
-        ByIdentity.Count > 0 && !Result.Needs.All(roots.Has) && ByIdentity.All(roots.Has) ? ByIdentity : Result.Needs;
-
     /// <summary>Kinds that only gates and flag rules look at.</summary>
-    public IEnumerable<Kind> Watched => Gates.SelectMany(gate => gate.Reads).Concat(FlagRules.SelectMany(rule => rule.Reads)).Distinct();
+    public IEnumerable<Kind> Watched => Plan.Watched;
+
+    /// <summary>What an evaluation looks up.</summary>
+    internal Plan Plan => _plan ??= new Plan(this);
 }
