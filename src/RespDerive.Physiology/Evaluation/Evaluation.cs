@@ -13,6 +13,7 @@ public sealed class Evaluation
     private readonly List<string> _flags = [];
     private readonly List<string> _missing = [];
     private readonly Roots _sound = new();
+    private readonly Roots _marked = new();
     private int _rank;
     private bool _impossible;
 
@@ -45,6 +46,7 @@ public sealed class Evaluation
     {
         Begin();
         var plan = definition.Plan;
+        roots = OfOneTransducer(plan.OneTransducer, roots);
         var path = plan.Path(roots);
         FindMissing(path, roots);
         var sound = Sound(roots);
@@ -101,6 +103,29 @@ public sealed class Evaluation
         _shares.Clear();
         _flags.Clear();
         Variant = null;
+    }
+
+    /// <summary>The roots, with those that must be of one transducer marked so where nothing else is said.</summary>
+    private Roots OfOneTransducer(Kind[] kinds, Roots roots)
+    {
+        if (kinds.Length == 0)
+        {
+            return roots;
+        }
+
+        string? mark = null;
+        foreach (var root in roots.Span)
+        {
+            mark ??= Array.IndexOf(kinds, root.Kind) >= 0 ? root.Transducer : null;
+        }
+
+        _marked.Clear();
+        foreach (var root in roots.Span)
+        {
+            _marked.Add(root.Transducer is null && Array.IndexOf(kinds, root.Kind) >= 0 ? root with { Transducer = mark ?? "one breath" } : root);
+        }
+
+        return _marked;
     }
 
     /// <summary>Gates see only roots inside their ranges, so that none can be tripped, or kept silent, by nonsense.</summary>

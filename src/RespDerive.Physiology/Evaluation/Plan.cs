@@ -10,6 +10,7 @@ internal sealed class Plan(Definition definition)
     public readonly Slot[] ByIdentity = [.. definition.ByIdentity];
     public readonly Gate[] Gates = [.. definition.Gates];
     public readonly FlagRule[] FlagRules = [.. definition.FlagRules];
+    public readonly Kind[] OneTransducer = [.. definition.OneTransducer];
     private Slot[]? _chain;
     private Kind[]? _watched;
 

@@ -73,16 +73,15 @@ public sealed record Option(IReadOnlyList<Term> Terms, string? Flag = null, stri
 /// <param name="Missing">Withheld code when none can be filled.</param>
 public sealed record Slot(string Name, IReadOnlyList<Option> Options, string Missing = Withheld.InputMissing)
 {
+    private static readonly Lock Numbering = new();
     private static int _last = -1;
-    private int _number = -1;
+    private Slot? _numbered;
+    private int _number;
 
     /// <summary>A slot with a single option.</summary>
     public Slot(Kind kind, Pairing pairing, string missing = Withheld.InputMissing) : this(kind.Name, [new Option(kind, pairing)], missing)
     {
     }
-
-    /// <summary>A copy is another slot, with a number of its own.</summary>
-    private Slot(Slot other) => (Name, Options, Missing) = (other.Name, other.Options, other.Missing);
 
     /// <summary>Every kind that may fill the slot.</summary>
     public IEnumerable<Kind> Kinds => Options.SelectMany(option => option.Terms).SelectMany(term => term.AnyOf).Distinct();
@@ -109,7 +108,8 @@ public sealed record Slot(string Name, IReadOnlyList<Option> Options, string Mis
     }
 
     /// <summary>Place in tables by slot; given to slots that are evaluated only, so that tables stay small.</summary>
-    internal int Number => _number >= 0 ? _number : Numbered();
+    /// <remarks>A copy made by <c>with</c> is another slot and takes a number of its own.</remarks>
+    internal int Number => ReferenceEquals(Volatile.Read(ref _numbered), this) ? _number : Numbered();
 
     /// <summary>A slot is equal to itself only: two definitions may ask for the same thing in two slots.</summary>
     public bool Equals(Slot? other) => ReferenceEquals(this, other);
@@ -119,7 +119,15 @@ public sealed record Slot(string Name, IReadOnlyList<Option> Options, string Mis
 
     private int Numbered()
     {
-        Interlocked.CompareExchange(ref _number, Interlocked.Increment(ref _last), -1);
-        return _number;
+        lock (Numbering)
+        {
+            if (!ReferenceEquals(_numbered, this))
+            {
+                _number = ++_last;
+                Volatile.Write(ref _numbered, this);
+            }
+
+            return _number;
+        }
     }
 }
