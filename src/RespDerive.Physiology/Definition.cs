@@ -37,6 +37,9 @@ public abstract class Definition
     /// <summary>The equation as implemented, symbols as in the inputs.</summary>
     public abstract string Equation { get; }
 
+    /// <summary>The equation in LaTeX, for one that is no simple algebra; null leaves it to be made from <see cref="Equation"/>.</summary>
+    public virtual string? EquationInLatex => null;
+
     /// <summary>Assumptions and range of validity.</summary>
     public abstract string Assumptions { get; }
 

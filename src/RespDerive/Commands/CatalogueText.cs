@@ -17,7 +17,7 @@ internal static class CatalogueText
             definition.Key,
             definition.Result.Unit ?? "",
             definition.Codes.FirstOrDefault(code => code.System == "http://loinc.org") is { } loinc ? "LOINC " + loinc.Code : "",
-            "needs " + string.Join(", ", definition.Result.Needs.Select(Symbol)),
+            "needs " + string.Join(", ", definition.Result.Needs.Select(Symbol)) + Mark(definition),
         })).ToArray();
         var lines = Columns.Of([.. rows.Select(row => row.Row)]).Split('\n');
         var text = new StringBuilder();
@@ -40,7 +40,7 @@ internal static class CatalogueText
             .Append(Columns.Note("Unit", (result.Unit == "1" ? "none (1)" : result.Unit) + ", " + Plural(definition.Decimals, "decimal")))
             .Append(Columns.Note("Assumes", definition.Assumptions))
             .Append(Columns.Note("Caution", definition.Caution))
-            .Append(Columns.Note("Called for", CalledFor(definition.Calling)))
+            .Append(Columns.Note("Called for", CalledFor(definition.Calling) + (definition.OnByDefault ? "" : "; off by default")))
             .Append(Columns.Note("Usual", Range(definition.Usual.Least, definition.Usual.Greatest, result.Unit) + "; outside, it is flagged"))
             .Append(Columns.Note("Possible", Range(result.Least, result.Greatest, result.Unit) + "; outside, it is withheld"));
         if (definition.GreatestRelativeUncertainty is { } greatest)
@@ -58,7 +58,7 @@ internal static class CatalogueText
             text.Append(Columns.Note(code.System == "http://loinc.org" ? "LOINC" : "MDC", $"{code.Code} {code.Display}"));
         }
 
-        text.Append("\nInputs, best first where several will do\n").Append(Columns.Of([.. InputRows(definition)]));
+        text.Append("\nInputs, best first where several will do\n").Append(Inputs(definition));
         if (definition.Gates.Count > 0)
         {
             text.Append("\nWithheld when\n").Append(Columns.Of([.. definition.Gates.Select(gate => new[] { gate.Text, gate.Code })]));
@@ -81,6 +81,9 @@ internal static class CatalogueText
     /// <summary>The slots of a definition and of those it rests on.</summary>
     internal static IEnumerable<Slot> Chain(IEnumerable<Slot> slots) => slots.SelectMany(slot => slot.Kinds.SelectMany(kind => Chain(kind.Needs)).Prepend(slot)).Distinct();
 
+    /// <summary>The inputs with ranges and units, best first.</summary>
+    internal static string Inputs(Definition definition) => Columns.Of([.. InputRows(definition)]);
+
     private static IEnumerable<string[]> InputRows(Definition definition)
     {
         foreach (var slot in Chain(definition.Result.Needs.Concat(definition.ByIdentity)))
@@ -97,8 +100,16 @@ internal static class CatalogueText
         }
     }
 
+    /// <summary>What sets a definition apart from those that simply run.</summary>
+    private static string Mark(Definition definition) => definition.ByHandOnly ? " (by hand only)" : definition.OnByDefault ? "" : " (off by default)";
+
     private static string CalledFor(Calling calling)
     {
+        if (calling.Anchors.Count == 0)
+        {
+            return "by hand only; never published";
+        }
+
         var text = "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))
             + (calling.Cadence == Cadence.QuarterHour ? "; the first in each quarter of an hour" : "; each, or the first in each quarter of an hour of a streamed signal");
         text += calling.OnlyWith.Count > 0 ? "; only when the patient's record of the last 24 h shows that it applies" : "";
