@@ -26,7 +26,7 @@ public sealed class DefinitionTests
         var definition = CatalogueData.Of(key);
         var gate = definition.Gates[index];
 
-        var roots = RootsOf(definition, gate.TrippedBy);
+        var roots = CatalogueData.RootsOf(definition, gate.TrippedBy);
         var tripped = definition.Gates.Where(other => other.Trips(roots)).Select(other => other.Code);
 
         Assert.Equal([gate.Code], tripped);
@@ -40,7 +40,7 @@ public sealed class DefinitionTests
         var definition = CatalogueData.Of(key);
         foreach (var vector in definition.Vectors)
         {
-            Assert.False(definition.Gates[index].Trips(RootsOf(definition, vector.Inputs)), vector.Source);
+            Assert.False(definition.Gates[index].Trips(CatalogueData.RootsOf(definition, vector.Inputs)), vector.Source);
         }
     }
 
@@ -80,7 +80,7 @@ public sealed class DefinitionTests
         {
             var without = vector.Inputs.Where((_, at) => at != i).ToArray();
             var computed = ByHand.Compute(definition, without);
-            var kind = RootsOf(definition, [vector.Inputs[i]]).All[0].Kind;
+            var kind = CatalogueData.RootsOf(definition, [vector.Inputs[i]]).All[0].Kind;
             if (kind.Assumed is not null || HasStandIn(definition, kind) || (kind == Kinds.PeepIntrinsic && computed.Computation.Withheld is null))
             {
                 continue; // has a default, or the rest is another way to the value
@@ -148,15 +148,4 @@ public sealed class DefinitionTests
         && slot.Options.Any(option => option.Terms.All(term => term.AnyOf.All(other => other.Assumed is not null))));
 
     private static IEnumerable<string> MissingCodes(Definition definition) => Chain.Slots(definition).Select(slot => slot.Missing);
-
-    private static Roots RootsOf(Definition definition, IEnumerable<Given> given)
-    {
-        var vocabulary = new Vocabulary(definition, Catalogue.Shipped);
-        return new Roots(given.Select(one =>
-        {
-            var kind = vocabulary.Find(one.Name);
-            Ucum.TryConvert(one.Value ?? 0, one.Unit ?? "1", kind.Unit ?? "1", out var value);
-            return new Root(kind, kind.IsCoded ? kind.Codes.ToList().IndexOf(one.Code!) : (double)value);
-        }));
-    }
 }

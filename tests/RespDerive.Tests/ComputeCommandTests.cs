@@ -60,6 +60,17 @@ public sealed class ComputeCommandTests
         Assert.Null(answer["uncertainty"]);
     }
 
+    [Fact]
+    public async Task Without_inputs_it_says_what_is_needed()
+    {
+        var (code, output, _) = await Cli.RunAsync("compute", "elastance");
+        Assert.Equal(Exit.Findings, code);
+        Assert.Matches(@"Cstat +static compliance .* given, or computed\n", output);
+        Assert.Matches(@"Pplat +plateau pressure +plateau-pressure +3 to 100 cm\[H2O\]", output);
+        Assert.Contains("respderive compute elastance \"Cstat=40 mL/cm[H2O]\"", output, StringComparison.Ordinal);
+        Assert.Equal("input-missing", (string)JsonNode.Parse((await Cli.RunAsync("compute", "pf-ratio", "-o", "json")).Output)!["withheld"]!["code"]!);
+    }
+
     [Theory]
     [InlineData("PAO2, PaO2, pao2", "compute", "pf-ratio", "Pa02=90", "fio2=0.4")]
     [InlineData("pf-ratio", "compute", "pf-ration", "pao2=90")]

@@ -117,6 +117,6 @@ public sealed record ByHand(Definition Definition, Computation Computation, IRea
 
     /// <summary>Kinds the formula rests on: the chain when it is complete, anything it could use when it is not.</summary>
     private static HashSet<Kind> Needed(Definition definition, Roots roots, Computation computation) => computation.Missing.Count == 0
-        ? [.. Chain.Steps(definition.Path(roots), roots).Select(step => step.Kind)]
+        ? [.. Chain.Steps(definition.Plan.Path(roots), roots).Select(step => step.Kind)]
         : [.. Chain.Slots(definition).SelectMany(slot => slot.Kinds)];
 }

@@ -28,6 +28,8 @@ public enum Origin
 /// <summary>One sort of value a formula can use: a quantity in its canonical UCUM unit, or a coded value.</summary>
 public sealed class Kind
 {
+    private static int _last = -1;
+
     private Kind(string key, string symbol, string name, Origin origin)
     {
         (Key, Symbol, Name, Origin) = (key, symbol, name, origin);
@@ -44,6 +46,9 @@ public sealed class Kind
 
     /// <summary>Where it comes from.</summary>
     public Origin Origin { get; }
+
+    /// <summary>Place in tables by kind.</summary>
+    internal int Number { get; } = Interlocked.Increment(ref _last);
 
     /// <summary>Canonical UCUM unit; null for a coded kind.</summary>
     public string? Unit { get; private init; }
@@ -120,9 +125,9 @@ public sealed class Kind
             return false;
         }
 
-        foreach (var slot in Needs)
+        for (var i = 0; i < Needs.Count; i++)
         {
-            if (!roots.Has(slot))
+            if (!roots.Has(Needs[i]))
             {
                 return false;
             }

@@ -16,6 +16,8 @@ internal static class CatalogueJson
         ["symbol"] = definition.Result.Symbol,
         ["name"] = definition.Result.Name,
         ["purpose"] = definition.Purpose,
+        ["onByDefault"] = definition.OnByDefault,
+        ["byHandOnly"] = definition.ByHandOnly,
         ["unit"] = definition.Result.Unit,
         ["codes"] = Array(definition.Codes.Select(code => new JsonObject { ["system"] = code.System, ["code"] = code.Code, ["display"] = code.Display })),
         ["needs"] = Texts(definition.Result.Needs.Select(CatalogueText.Symbol)),

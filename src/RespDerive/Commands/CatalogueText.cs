@@ -17,7 +17,7 @@ internal static class CatalogueText
             definition.Key,
             definition.Result.Unit ?? "",
             definition.Codes.FirstOrDefault(code => code.System == "http://loinc.org") is { } loinc ? "LOINC " + loinc.Code : "",
-            "needs " + string.Join(", ", definition.Result.Needs.Select(Symbol)),
+            "needs " + string.Join(", ", definition.Result.Needs.Select(Symbol)) + Mark(definition),
         })).ToArray();
         var lines = Columns.Of([.. rows.Select(row => row.Row)]).Split('\n');
         var text = new StringBuilder();
@@ -62,7 +62,7 @@ internal static class CatalogueText
             text.Append(Columns.Note(code.System == "http://loinc.org" ? "LOINC" : "MDC", $"{code.Code} {code.Display}"));
         }
 
-        text.Append("\nInputs, best first where several will do\n").Append(Columns.Of([.. InputRows(definition)]));
+        text.Append("\nInputs, best first where several will do\n").Append(Inputs(definition));
         if (definition.Gates.Count > 0)
         {
             text.Append("\nWithheld when\n").Append(Columns.Of([.. definition.Gates.Select(gate => new[] { gate.Text, gate.Code })]));
@@ -85,6 +85,9 @@ internal static class CatalogueText
     /// <summary>The slots of a definition and of those it rests on.</summary>
     internal static IEnumerable<Slot> Chain(IEnumerable<Slot> slots) => slots.SelectMany(slot => slot.Kinds.SelectMany(kind => Chain(kind.Needs)).Prepend(slot)).Distinct();
 
+    /// <summary>The inputs with ranges and units, best first.</summary>
+    internal static string Inputs(Definition definition) => Columns.Of([.. InputRows(definition)]);
+
     private static IEnumerable<string[]> InputRows(Definition definition)
     {
         foreach (var slot in Chain(definition.Result.Needs.Concat(definition.ByIdentity)))
@@ -100,6 +103,9 @@ internal static class CatalogueText
             }
         }
     }
+
+    /// <summary>What sets a definition apart from those that simply run.</summary>
+    private static string Mark(Definition definition) => definition.ByHandOnly ? " (by hand only)" : definition.OnByDefault ? "" : " (off by default)";
 
     private static string Bands(Classification bands) =>
         string.Concat(bands.Result.Codes.Select(code => Columns.Note("Code", $"{code}: {bands.Text(code)}")))
@@ -117,7 +123,7 @@ internal static class CatalogueText
         var calling = definition.Calling;
         if (calling.Anchors.Count == 0)
         {
-            return "never by a record; only by hand";
+            return "by hand only; never published";
         }
 
         var text = (definition.OnByDefault ? "" : "only where the site names it; ") + "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))

@@ -55,6 +55,20 @@ internal static class ComputeText
             .AppendJoin(", ", placement.Bands.Where(band => band.Probability >= 0.005).Select(band => $"{band.Code} {Figures.Percent(band.Probability)}")).Append("\n\n");
     }
 
+    /// <summary>What a definition needs, for somebody who gave nothing yet.</summary>
+    public static string Needs(Definition definition) => new StringBuilder()
+        .Append(definition.Key).Append(": ").Append(definition.Result.Name).Append("\n\n")
+        .Append("  No value yet. It needs (best first where several will do):\n\n").Append(CatalogueText.Inputs(definition)).Append('\n')
+        .Append(Columns.Note("Equation", definition.Equation))
+        .Append(Columns.Note("Example", Command(definition, definition.Vectors[0].Inputs)))
+        .ToString();
+
+    /// <summary>The command that computes a definition from these values.</summary>
+    public static string Command(Definition definition, IEnumerable<Given> given) => $"respderive compute {definition.Key} {string.Join(' ', given.Select(Word))}";
+
+    private static string Word(Given given) => given.Typed.Contains(' ', StringComparison.Ordinal) || given.Typed.Contains('[', StringComparison.Ordinal)
+        ? $"\"{given.Name}={given.Typed}\"" : $"{given.Name}={given.Typed}";
+
     private static string[] Row(HandInput input, Computation computed) =>
     [
         $"{input.Kind.Name} ({input.Kind.Symbol})",

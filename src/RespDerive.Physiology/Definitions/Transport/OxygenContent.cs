@@ -94,7 +94,7 @@ public sealed class OxygenContent : Definition
         : BloodSlots.Content(x, x[OtherSaturation] / 100 * BloodSlots.Active(x), x[OtherTension]);
 
     private static bool Mixed(Roots x) => !(x.Has(BloodSlots.ArterialSaturation) && x.Has(Slots.PaO2))
-        && OtherSaturation.Chosen(x) is { } saturation && OtherTension.Chosen(x) is { } tension
+        && x.Chosen(OtherSaturation) is { } saturation && x.Chosen(OtherTension) is { } tension
         && Place(OtherSaturation, saturation) != Place(OtherTension, tension);
 
     /// <summary>Options of both slots stand in the order unspecified, mixed venous, end-capillary.</summary>
