@@ -20,6 +20,12 @@ public abstract class Definition
     /// <summary>Rises whenever the number changes; the old one stays beside it, frozen.</summary>
     public virtual int Revision => 1;
 
+    /// <summary>False for lesser variants and bands: a site must ask for them.</summary>
+    public virtual bool OnByDefault => true;
+
+    /// <summary>True for targets, predictions and model rates: computed when asked, never published.</summary>
+    public virtual bool ByHandOnly => false;
+
     /// <summary>Heading under which the catalogue lists it.</summary>
     public abstract string Purpose { get; }
 
@@ -52,6 +58,9 @@ public abstract class Definition
 
     /// <summary>Conditions that are published with it.</summary>
     public virtual IReadOnlyList<FlagRule> FlagRules => [];
+
+    /// <summary>Pressures of one breath, so of one transducer: where a root says nothing else, they share its zero offset.</summary>
+    public virtual IReadOnlyList<Kind> OneTransducer => [];
 
     /// <summary>Withheld above this relative standard uncertainty; null when the definition does not say so.</summary>
     public virtual double? GreatestRelativeUncertainty => null;

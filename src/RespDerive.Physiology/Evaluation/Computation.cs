@@ -32,6 +32,7 @@ public sealed record Computation
     /// <summary>Evaluates a definition on its roots. Never throws for any combination of roots.</summary>
     public static Computation Of(Definition definition, Roots roots)
     {
+        roots = OfOneTransducer(definition.OneTransducer, roots);
         var reasons = new List<string>();
         var missing = new List<string>();
         var formula = definition.Result.Formula!;
@@ -73,6 +74,17 @@ public sealed record Computation
     /// <summary>Codes of the gates that trip.</summary>
     public static IEnumerable<string> Tripped(Definition definition, Roots roots) =>
         definition.Gates.Where(gate => gate.Trips(roots)).Select(gate => gate.Code);
+
+    private static Roots OfOneTransducer(IReadOnlyList<Kind> kinds, Roots roots)
+    {
+        if (kinds.Count == 0)
+        {
+            return roots;
+        }
+
+        var mark = roots.All.Where(root => kinds.Contains(root.Kind)).Select(root => root.Transducer).FirstOrDefault(known => known is not null) ?? "one breath";
+        return new Roots(roots.All.Select(root => root.Transducer is null && kinds.Contains(root.Kind) ? root with { Transducer = mark } : root));
+    }
 
     private static bool IsNonsense(Root root) => root.Kind.IsCoded
         ? !double.IsInteger(root.Value) || root.Value < 0 || root.Value >= root.Kind.Codes.Count

@@ -19,6 +19,8 @@ public static class Flags
     public const string OrderUnknown = "order-unknown";
     public const string SpecimenUnread = "specimen-unread";
     public const string OtherDevice = "other-device";
+    public const string ModeUnconfirmed = "mode-unconfirmed";
+    public const string OnPressureSupport = "on-pressure-support";
 #pragma warning restore CS1591
 
     private static readonly Dictionary<string, string> Lines = new(StringComparer.Ordinal)
@@ -38,6 +40,8 @@ public static class Flags
         [OrderUnknown] = "The source gave neither version nor time of change; arrival order decided.",
         [SpecimenUnread] = "The specimen named by the source could not be read.",
         [OtherDevice] = "The inputs come from different devices.",
+        [ModeUnconfirmed] = "The ventilation mode was taken on trust to be the one the formula is made for.",
+        [OnPressureSupport] = "Pressure support was set: the index reads lower than in unsupported breathing.",
     };
 
     /// <summary>All flags with their line.</summary>

@@ -91,6 +91,10 @@ public sealed class Kind
     public static Kind Coded(string key, string symbol, string name, Origin origin, params string[] codes) =>
         new(key, symbol, name, origin) { Codes = codes };
 
+    /// <summary>A coded kind with a single code that is assumed when nothing better is given.</summary>
+    public static Kind Taken(string key, string symbol, string name, Origin origin, string code) =>
+        new(key, symbol, name, origin) { Codes = [code], Assumed = 0 };
+
     /// <summary>The result of a definition, usable as an input of others.</summary>
     public static Kind Derived(string key, string symbol, string name, string unit, double least, double greatest, Tolerance given,
         IReadOnlyList<Slot> needs, Func<Roots, double> formula) => new(key, symbol, name, Origin.Derived)
