@@ -76,6 +76,6 @@ public sealed class ConfluenceTests
     private static string Describe(IEnumerable<Outcome> outcomes) => string.Join('\n', outcomes
         .OrderBy(outcome => outcome.Identity)
         .Select(outcome => $"{outcome.Definition} {outcome.AnchorReference} {outcome.AtText} {outcome.Withheld} {outcome.Value} {outcome.Published} ±{outcome.Uncertainty} "
-            + $"[{string.Join(',', outcome.Flags)}] {(outcome.Withheld is null ? $"{outcome.Preliminary} {outcome.Variant} {outcome.Person?.Version}" : "")} "
+            + $"[{string.Join(',', outcome.Flags)}] {(outcome.Withheld is null ? $"{outcome.Preliminary} {outcome.Variant} {outcome.Person?.Resource.Id}" : "")} "
             + (outcome.Withheld is null ? string.Join(' ', outcome.Inputs.Where(input => !input.GateOnly).Select(input => $"{input.Kind}={input.Value}:{string.Join('+', input.Readings.Select(reading => reading.Resource.Id + "v" + reading.Version))}")) : "")));
 }

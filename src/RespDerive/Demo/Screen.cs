@@ -27,6 +27,7 @@ internal sealed class Screen(TextWriter writer)
     {
         Line("RespDerive demo: an invented ward with invented patients, faster than real time. Derived numbers are arithmetic on charted");
         Line("inputs; they are no diagnosis, no alarm and no order.");
+        Line("in: charted · =: derived (± one standard uncertainty) · rev: revised · back: retracted · held: withheld, and why");
         Line($"FHIR endpoint {sandbox} · service {service} · store in {folder}");
         Line("");
         Line("time   patient          what");
