@@ -58,7 +58,7 @@ public sealed class AirwayResistanceTests
     }
 
     [Fact]
-    public void Two_devices_do_not_share_an_offset_and_a_small_drop_between_them_is_too_uncertain() => Assert.Equal(Withheld.UncertaintyTooLarge,
+    public void A_drop_between_two_devices_is_none() => Assert.Equal(Withheld.InputMissing,
         Of([new(Kinds.Plateau, 22, "a"), new(Kinds.Peak, 28, "b"), new(Kinds.FlowSet, 45), new(Kinds.Mode, VolumeControl)]).Withheld);
 
     private static Computation Of(Root[] roots) => Computation.Of(CatalogueData.Of("airway-resistance"), new Roots(roots));

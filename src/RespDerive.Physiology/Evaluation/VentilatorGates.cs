@@ -29,4 +29,8 @@ public static class VentilatorGates
     /// <summary>At constant flow the peak contains the plateau; below it the two are not of one breath, or the patient pulls.</summary>
     public static readonly Gate PeakNotBelowPlateau = new(Withheld.Impossible, "peak pressure is below the plateau pressure of the same breath", [],
         x => x.Has(Kinds.Peak) && x.Has(Kinds.Plateau) && x[Kinds.Peak] < x[Kinds.Plateau]);
+
+    /// <summary>A drop between two pressures is one only when one transducer measured both; without a device they are taken to be of one.</summary>
+    public static readonly Gate PressuresOfOneDevice = new(Withheld.InputMissing, "there is no peak pressure of the device that measured the plateau", [],
+        x => x.All.Where(root => root.Kind == Kinds.Peak || root.Kind == Kinds.Plateau).Select(root => root.Transducer).OfType<string>().Distinct(StringComparer.Ordinal).Count() > 1);
 }

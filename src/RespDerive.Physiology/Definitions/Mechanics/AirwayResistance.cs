@@ -60,6 +60,7 @@ public sealed class AirwayResistance : Definition
         VentilatorGates.FlowConstant,
         CommonGates.Passive with { TrippedBy = [.. Example, ("patient_effort", "true")] },
         VentilatorGates.PeakNotBelowPlateau with { TrippedBy = [("Ppeak", 20, "cm[H2O]"), ("Pplat", 22, "cm[H2O]"), ("flow", 45, "L/min")] },
+        VentilatorGates.PressuresOfOneDevice with { TrippedBy = [new("Ppeak", 30, "cm[H2O]", null, "a"), new("Pplat", 24, "cm[H2O]", null, "b"), ("flow", 45, "L/min")] },
         new Gate(Withheld.UncertaintyTooLarge, "the set flow is under 15 L/min", [], x => x.Has(Flow) && x[Flow] < LeastFlow, ("Ppeak", 28, "cm[H2O]"), ("Pplat", 22, "cm[H2O]"), ("flow", 12, "L/min")),
     ];
 

@@ -53,6 +53,7 @@ public sealed class MechanicalPowerVcvSimplified : Definition
     /// <inheritdoc/>
     public override IReadOnlyList<Gate> Gates =>
     [
+        VentilatorGates.PressuresOfOneDevice with { TrippedBy = [new("Ppeak", 25, "cm[H2O]", null, "a"), new("Pplat", 20, "cm[H2O]", null, "b"), ("RR", 20, "/min"), ("VT", 500, "mL"), ("PEEPtot", 5, "cm[H2O]")] },
         VentilatorGates.WaveformConstant with { TrippedBy = [.. Example, ("waveform", "decelerating")] },
         VentilatorGates.VolumeControlled with { TrippedBy = [.. Example, ("mode", "pressure control")] },
         CommonGates.Passive with { TrippedBy = [.. Example, ("patient_effort", "true")] },

@@ -70,6 +70,7 @@ public sealed class WorkRateTotal : Definition
         VentilatorGates.FlowConstant with { TrippedBy = [.. Example, ("waveform", "decelerating")] },
         CommonGates.Passive with { TrippedBy = [.. Example, ("patient_effort", "true")] },
         VentilatorGates.NotByMask with { TrippedBy = [.. Example, ("support", "non-invasive ventilation")] },
+        VentilatorGates.PressuresOfOneDevice with { TrippedBy = [new("Ppeak", 30, "cm[H2O]", null, "a"), new("Pplat", 24, "cm[H2O]", null, "b"), ("flow", 60, "L/min"), ("VT", 420, "mL"), ("PEEPtot", 10, "cm[H2O]"), ("RR", 20, "/min")] },
         VentilatorGates.PeakNotBelowPlateau with { TrippedBy = [("Ppeak", 20, "cm[H2O]"), ("Pplat", 24, "cm[H2O]"), ("flow", 60, "L/min"), ("VT", 420, "mL"), ("PEEPtot", 10, "cm[H2O]"), ("RR", 20, "/min")] },
         CommonGates.PlateauAbovePeep with { TrippedBy = [("Ppeak", 30, "cm[H2O]"), ("Pplat", 10, "cm[H2O]"), ("flow", 60, "L/min"), ("VT", 420, "mL"), ("PEEPtot", 10, "cm[H2O]"), ("RR", 20, "/min")] },
     ];
