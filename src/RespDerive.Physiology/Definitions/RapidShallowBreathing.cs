@@ -47,7 +47,7 @@ public sealed class RapidShallowBreathing : Definition
     public override string Assumptions => "Adults breathing spontaneously, volume and rate over a minute or more. By hand spontaneous breathing is assumed unless the mode is given.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "An adjunct, not a decision: a falsely low value invites early extubation, a falsely high one delay. Reads lower with "
         + "pressure support than without; note support and time since start.";
 

@@ -32,7 +32,7 @@ public sealed class MinimumForceRate : Definition
     public override string Assumptions => "Sinusoidal pressure and flow, linear resistance and compliance, constant dead space. Time constant 0.05 to 3 s. Runs away where resistance is low.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "A model value, not a setting and not advice: never to be entered into a ventilator. Where resistance is low it lies far "
         + "above the rates people breathe at.";
 

@@ -38,7 +38,7 @@ public sealed class AirwayResistance : Definition
     public override string Equation => "Raw = 60·(Ppeak − Pplat) / flow";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "Passive patient, constant inspiratory flow until the hold; peak and plateau of one breath. Tube, airways and the "
         + "viscoelastic part together. By hand volume control is assumed unless the mode is given.";
 

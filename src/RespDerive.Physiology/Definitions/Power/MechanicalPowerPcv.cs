@@ -42,13 +42,13 @@ public sealed class MechanicalPowerPcv : Definition
     public override string Equation => "MPpcv = k·RR·((PEEP + dPinsp)·VT/1000 − dPinsp²·C/1000·(1/2 − x + x²·(1 − e^(−1/x)))), x = R·C/(1000·Tslope)";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "Passive patient, pressure control, pressure rising in a straight line over Tslope and held until the volume is in; one "
         + "compartment. k = 0.098 as printed by the source (exact: 0.0980665). Computed on request only: resistance and rise time "
         + "are not in the record of a pressure-controlled breath.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "No agreed threshold: for trend only. Whether the PEEP term belongs in it is disputed. Power of the ventilator on lung "
         + "and chest wall together; with patient effort it reads falsely low.";
 

@@ -37,13 +37,13 @@ public sealed class MechanicalPowerPcvSimplified : Definition
     public override string Equation => "MPpcvs = k·RR·VT/1000·(dPinsp + PEEP)";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "Passive patient, pressure control; pressure rises at once. With a slow rise it reads too high (19 % on average on "
         + "patients, Trinkle 2022). k = 0.098 as printed by the source (exact: 0.0980665). By hand pressure control is assumed "
         + "unless the mode is given.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "No agreed threshold: for trend only. Whether the PEEP term belongs in it is disputed. Power of the ventilator on lung "
         + "and chest wall together; with patient effort it reads falsely low.";
 

@@ -40,13 +40,13 @@ public sealed class MechanicalPowerVcv : Definition
     public override string Equation => "MPvcv = k·RR·((VT/1000)²·(Ers/2 + RR·(1 + IE)/(60·IE)·Raw) + VT/1000·PEEPtot)";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "Passive patient, volume control; gas flows at a constant rate during the whole inspiratory time. Where a pause is part "
         + "of that time the resistive term reads too low; the simplified form does not. k = 0.098 as printed by the source (exact: "
         + "0.0980665). By hand volume control is assumed unless the mode is given.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "No agreed threshold: for trend only. Whether the PEEP term belongs in it is disputed. Power of the ventilator on lung "
         + "and chest wall together; with patient effort it reads falsely low. IE is inspiratory over expiratory time: 1:2 is 0.5, "
         + "not 2.";

@@ -31,13 +31,13 @@ public sealed class MechanicalPowerVcvSimplified : Definition
     public override string Equation => "MPvcvs = k·RR·VT/1000·(Ppeak − (Pplat − PEEPtot)/2)";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "Passive patient, volume control with constant flow; pressures and volume of one breath. The PEEP term is included. k = "
         + "0.098 as printed by the source (exact: 0.0980665 J/(L.cm[H2O]), 0.07 % more). By hand volume control is assumed unless "
         + "the mode is given.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "No agreed threshold: for trend only. Whether the PEEP term belongs in it is disputed. Power of the ventilator on lung "
         + "and chest wall together; with patient effort it reads falsely low.";
 

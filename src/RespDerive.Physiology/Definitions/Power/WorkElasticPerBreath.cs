@@ -39,7 +39,7 @@ public sealed class WorkElasticPerBreath : Definition
     public override string Assumptions => "Passive patient, linear elastance above PEEP; the work of PEEP (PEEP·VT) is not included. Litre times cm[H2O] is 0.0980665 J exactly.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Work of the ventilator on the patient, not of the patient: the work of breathing needs an esophageal pressure. With "
         + "patient effort it reads falsely low.";
 

@@ -43,12 +43,12 @@ public sealed class WorkRateTotal : Definition
     public override string Equation => "Wrate = RR·(Wel + Wres)";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "As for the elastic and the resistive work per breath; inspiration only, PEEP left out. Without volume and rate: those of "
         + "the least work (half-sine flow).";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Work of the ventilator on the patient, not of the patient: the work of breathing needs an esophageal pressure. With "
         + "patient effort it reads falsely low.";
 

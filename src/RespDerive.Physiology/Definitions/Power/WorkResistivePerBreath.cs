@@ -34,12 +34,12 @@ public sealed class WorkResistivePerBreath : Definition
     public override string Equation => "Wres = 0.0980665·R·flow/60·VT/1000, or without a flow 0.0980665·(π²/4)·R·RR/60·(VT/1000)²";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "Passive patient, resistance independent of flow, inspiration only. Constant flow when a flow is given; otherwise half a "
         + "sine wave with inspiration as long as expiration (by hand only). Litre times cm[H2O] is 0.0980665 J exactly.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Work of the ventilator on the patient, not of the patient: the work of breathing needs an esophageal pressure. With "
         + "patient effort it reads falsely low.";
 

@@ -40,7 +40,7 @@ public sealed class ElastanceChestWall : Definition
     public override string Assumptions => "Passive patient, both pressures without flow and of one breath with the volume. No range given by the source.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. With patient effort it means nothing.";
 

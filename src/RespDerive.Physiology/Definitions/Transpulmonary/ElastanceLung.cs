@@ -29,7 +29,7 @@ public sealed class ElastanceLung : Definition
     public override string Assumptions => "As for the elastances of respiratory system and chest wall, of one breath.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. With set PEEP and unseen intrinsic PEEP it reads falsely high.";
 

@@ -29,7 +29,7 @@ public sealed class ElastanceRatio : Definition
     public override string Assumptions => "As for the elastance of the lung; 0.2 to 0.95 in patients.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. With set PEEP and unseen intrinsic PEEP it reads falsely high.";
 

@@ -32,7 +32,7 @@ public sealed class TranspulmonaryDrivingPressure : Definition
     public override string Assumptions => "As for the two pressures; both of one breath. No range given by the source.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. With set PEEP and unseen intrinsic PEEP it reads falsely high; with patient effort "
         + "it is not defined by these pressures.";

@@ -31,12 +31,12 @@ public sealed class TranspulmonaryElastanceDerived : Definition
     public override string Equation => "PLel = Pplat·EL / Ers";
 
     /// <inheritdoc/>
-    public override string Assumptions => 
+    public override string Assumptions =>
         "As for the elastance of the lung; elastances constant down to zero airway pressure. The directly measured pressure "
         + "differs by the resting height of the esophageal pressure.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. State the method: it is not the directly measured pressure. With set PEEP and "
         + "unseen intrinsic PEEP it reads falsely high.";

@@ -30,7 +30,7 @@ public sealed class TranspulmonaryEndExpiratory : Definition
     public override string Assumptions => "Passive patient, total PEEP of an end-expiratory hold; directly measured esophageal pressure, no correction for filling.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. With set PEEP and unseen intrinsic PEEP it reads falsely low.";
 

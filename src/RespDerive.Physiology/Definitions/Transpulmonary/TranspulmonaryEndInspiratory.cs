@@ -30,7 +30,7 @@ public sealed class TranspulmonaryEndInspiratory : Definition
     public override string Assumptions => "Passive patient, plateau of an end-inspiratory hold, both pressures of one hold; directly measured esophageal pressure, no correction for filling.";
 
     /// <inheritdoc/>
-    public override string Caution => 
+    public override string Caution =>
         "Needs a well-placed esophageal balloon, confirmed by an occlusion test; its artefacts and filling move the number by "
         + "several cm[H2O]. No agreed threshold. The elastance-derived pressure is another quantity and differs.";
 
