@@ -29,7 +29,7 @@ public static class CatalogueData
         {
             var kind = vocabulary.Find(one.Name);
             Ucum.TryConvert(one.Value ?? 0, one.Unit ?? "1", kind.Unit ?? "1", out var value);
-            return new Root(kind, kind.IsCoded ? kind.Codes.ToList().IndexOf(one.Code!) : (double)value);
+            return new Root(kind, kind.IsCoded ? kind.Codes.ToList().IndexOf(one.Code!) : (double)value, one.Transducer);
         }));
     }
 

@@ -90,6 +90,19 @@ public sealed class UcumTests
         { "mL/L/mm[Hg]", "mL/dL/mm[Hg]", 0.1 },
         { "mL/dL/kPa", "mL/dL/mm[Hg]", 0.1333224 },
         { "mL/L/kPa", "mL/dL/mm[Hg]", 0.01333224 },
+        { "mL/kPa/kg", "mL/cm[H2O]/kg", 0.0980665 },
+        { "mL/cm[H2O]/kg", "mL/kPa/kg", 10.19716 },
+        { "mL/mbar/kg", "mL/cm[H2O]/kg", 0.980665 },
+        { "/min/L", "/min/mL", 0.001 },
+        { "/(min.L)", "/min/L", 1 },
+        { "/min/mL", "/min/L", 1000 },
+        { "J", "L.cm[H2O]", 10.19716 },
+        { "mJ", "J", 0.001 },
+        { "L.cm[H2O]", "J", 0.0980665 },
+        { "J/min", "W", 1 / 60.0 },
+        { "W", "J/min", 60 },
+        { "mW", "J/min", 0.06 },
+        { "J/(L.cm[H2O])", "J/(L.cm[H2O])", 1 },
     };
 
     [Theory]

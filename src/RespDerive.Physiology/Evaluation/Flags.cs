@@ -24,6 +24,8 @@ public static class Flags
     public const string SupportUnconfirmed = "support-unconfirmed";
     public const string AltitudeUnknown = "altitude-unknown";
     public const string BandUncertain = "band-uncertain";
+    public const string ModeUnconfirmed = "mode-unconfirmed";
+    public const string OnPressureSupport = "on-pressure-support";
 #pragma warning restore CS1591
 
     private static readonly Dictionary<string, string> Lines = new(StringComparer.Ordinal)
@@ -48,6 +50,8 @@ public static class Flags
         [SupportUnconfirmed] = "The kind of respiratory support was taken on trust.",
         [AltitudeUnknown] = "The barometric pressure is not known, so there is no correction for altitude.",
         [BandUncertain] = "A cut-point lies within two standard uncertainties: a neighbouring band is possible.",
+        [ModeUnconfirmed] = "The ventilation mode was taken on trust to be the one the formula is made for.",
+        [OnPressureSupport] = "Pressure support was set: the index reads lower than in unsupported breathing.",
     };
 
     /// <summary>All flags with their line.</summary>

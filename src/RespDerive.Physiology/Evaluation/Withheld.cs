@@ -37,6 +37,7 @@ public static class Withheld
     public const string Dyshemoglobin = "dyshaemoglobin";
     public const string NotOnRoomAir = "not-on-room-air";
     public const string NotOnHighFlow = "not-on-high-flow";
+    public const string NotSpontaneous = "not-spontaneous";
     public const string PressureUnknown = "pressure-unknown";
     public const string ConflictingInputs = "conflicting-inputs";
     public const string TimeUncertain = "time-uncertain";
@@ -82,6 +83,7 @@ public static class Withheld
         (Dyshemoglobin, "Carboxy- and methaemoglobin are not known where they count."),
         (NotOnRoomAir, "The prediction holds on room air only."),
         (NotOnHighFlow, "The value is defined only for high-flow nasal oxygen."),
+        (NotSpontaneous, "The value is defined only for spontaneous breaths."),
         (PressureUnknown, "The barometric pressure is not known; it is never assumed."),
         (ConflictingInputs, "Two inputs of equal rank disagree."),
         (TimeUncertain, "The time of the anchor is not known to the minute."),

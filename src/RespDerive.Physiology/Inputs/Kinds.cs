@@ -70,10 +70,14 @@ public static class Kinds
     public static readonly Kind EsophagealEndInspiratory = Kind.Quantity("esophageal-pressure-end-inspiratory", "Pes_ei", "esophageal pressure at end-inspiration", Measurement, "cm[H2O]", -30, 80, Tolerance.Deviation(3, 0, Judgement + ": ±2 cm[H2O] plus position and filling of the balloon"));
     public static readonly Kind EsophagealEndExpiratory = Kind.Quantity("esophageal-pressure-end-expiratory", "Pes_ee", "esophageal pressure at end-expiration", Measurement, "cm[H2O]", -30, 60, Tolerance.Deviation(3, 0, Judgement + ": ±2 cm[H2O] plus position and filling of the balloon"));
 
+    public static readonly Kind Esophageal = Kind.Quantity("esophageal-pressure", "Pes", "esophageal pressure, phase unspecified", Measurement, "cm[H2O]", -30, 80, Tolerance.Deviation(3, 0, Judgement + ": ±2 cm[H2O] plus position and filling of the balloon"));
+    public static readonly Kind InspiratoryPressureAbovePeep = Kind.Quantity("inspiratory-pressure-set-above-peep", "dPinsp", "inspiratory pressure above PEEP, set", Setting, "cm[H2O]", 1, 80, Pressure);
+
     // volumes, rates, flows
     public static readonly Kind TidalVolumeExpired = Kind.Quantity("tidal-volume-expired", "VT", "expired tidal volume", Measurement, "mL", 10, 3000, Volume);
     public static readonly Kind TidalVolume = Kind.Quantity("tidal-volume", "VTdel", "delivered tidal volume", Measurement, "mL", 10, 3000, Volume);
     public static readonly Kind TidalVolumeSet = Kind.Quantity("tidal-volume-set", "VTset", "tidal volume, set", Setting, "mL", 10, 3000, Volume);
+    public static readonly Kind TidalVolumeSpontaneous = Kind.Quantity("tidal-volume-spontaneous", "VTspont", "tidal volume of spontaneous breaths", Measurement, "mL", 10, 3000, Volume);
     public static readonly Kind MinuteVolumeExpired = Kind.Quantity("minute-volume-expired", "VE", "expired minute volume", Measurement, "L/min", 0.3, 60, Tolerance.Limit(0, 0.15, Ventilator));
     public static readonly Kind RateTotal = Kind.Quantity("respiratory-rate-total", "RR", "total breath rate on the ventilator", Measurement, "/min", 2, 120, Rate);
     public static readonly Kind RateSpontaneous = Kind.Quantity("respiratory-rate-spontaneous", "RRspont", "spontaneous breath rate", Measurement, "/min", 0, 120, Rate);
@@ -82,6 +86,17 @@ public static class Kinds
     public static readonly Kind FlowSet = Kind.Quantity("inspiratory-flow-set", "flow", "inspiratory flow, set", Setting, "L/min", 1, 200, Tolerance.Limit(0, 0.1, Judgement));
 
     public static readonly Kind CardiacOutput = Kind.Quantity("cardiac-output", "CO", "cardiac output", Measurement, "L/min", 0.5, 30, Tolerance.Deviation(0, 0.07, "thermodilution in triplicate ±10 to 15 % (from memory)"));
+    public static readonly Kind InspiratoryTime = Kind.Quantity("inspiratory-time", "Ti", "inspiratory time", Measurement, "s", 0.1, 10, Tolerance.Limit(0, 0.1, Judgement));
+    public static readonly Kind IeRatio = Kind.Quantity("ie-ratio", "IE", "inspiratory over expiratory time", Measurement, "1", 0.1, 4, Tolerance.Limit(0, 0.1, Judgement));
+    public static readonly Kind IeRatioSet = Kind.Quantity("ie-ratio-set", "IEset", "inspiratory over expiratory time, set", Setting, "1", 0.1, 4, Tolerance.Limit(0, 0.1, Judgement));
+    public static readonly Kind RiseTime = Kind.Quantity("pressure-rise-time-set", "Tslope", "time over which the inspiratory pressure rises, set", Setting, "s", 0, 2, Tolerance.Limit(0, 0.1, Judgement));
+
+    // model, targets
+    public static readonly Kind DeadSpaceVolume = Kind.Quantity("dead-space-volume", "VD", "dead space of a breath", Measurement, "mL", 5, 1500, Tolerance.Limit(0, 0.15, Judgement));
+    public static readonly Kind AlveolarVentilationToKeep = Kind.Quantity("alveolar-ventilation-to-keep", "VAkeep", "alveolar ventilation that is to be kept", Constant, "L/min", 0.5, 40, Tolerance.None);
+    public static readonly Kind TidalVolumeTarget = Kind.Quantity("tidal-volume-target", "VTtarget", "wanted tidal volume per predicted body weight", Constant, "mL/kg", 2, 15, Tolerance.None);
+    public static readonly Kind PrintedWorkFactor = Kind.Quantity("work-factor", "k", "work of 1 L·cm[H2O], as printed with the formulas of mechanical power", Constant, "J/(L.cm[H2O])", 0.0979, 0.0982, Tolerance.None, assumed: 0.098);
+    public static readonly Kind ModeTaken = Kind.Taken("ventilator-mode-taken", "mode_taken", "ventilation mode, taken on trust", Constant, "the one the formula is made for");
 
     // patient, site
     public static readonly Kind Height = Kind.Quantity("height", "height", "body height", Demographic, "cm", 140, 210, Tolerance.Limit(1, 0, "measured height, own judgement"), Withheld.HeightOutOfRange);

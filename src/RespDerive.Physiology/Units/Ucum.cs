@@ -113,6 +113,24 @@ public static class Ucum
         ["mL/L/mm[Hg]"] = new("solubility", 0.1m),
         ["mL/dL/kPa"] = new("solubility", 0.133322m),
         ["mL/L/kPa"] = new("solubility", 0.0133322m),
+        // volume per body mass and pressure, in mL/kPa/kg
+        ["mL/kPa/kg"] = new("compliance per mass", 1m),
+        ["mL/cm[H2O]/kg"] = new("compliance per mass", 1m / 0.0980665m),
+        ["mL/mbar/kg"] = new("compliance per mass", 10m),
+        // rate per volume, in /min/L
+        ["/min/L"] = new("rate per volume", 1m),
+        ["/(min.L)"] = new("rate per volume", 1m),
+        ["/min/mL"] = new("rate per volume", 1000m),
+        // work, in J
+        ["J"] = new("work", 1m),
+        ["mJ"] = new("work", 0.001m),
+        ["L.cm[H2O]"] = new("work", 0.0980665m),
+        // work per time, in J/min
+        ["J/min"] = new("power", 1m),
+        ["W"] = new("power", 60m),
+        ["mW"] = new("power", 0.06m),
+        // work per volume and pressure: a pure number for the formulas that print their own
+        ["J/(L.cm[H2O])"] = new("work factor", 1m),
         // temperature, in K
         ["K"] = new("temperature", 1m),
         ["Cel"] = new("temperature", 1m, 273.15m),

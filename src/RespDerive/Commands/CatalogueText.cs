@@ -98,7 +98,7 @@ internal static class CatalogueText
                 [
                     kind.Symbol, kind.Name, kind.Key,
                     kind.IsCoded ? string.Join(" | ", kind.Codes) : Range(kind.Least, kind.Greatest, kind.Unit),
-                    kind.Formula is not null ? "given, or computed" : kind.Assumed is { } assumed ? $"assumed {Figures.Plain(assumed)} unless given" : "",
+                    kind.Formula is not null ? "given, or computed" : kind.Assumed is { } assumed ? $"assumed {(kind.IsCoded ? kind.Codes[(int)assumed] : Figures.Plain(assumed))} unless given" : "",
                 ];
             }
         }
