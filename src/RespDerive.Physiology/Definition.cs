@@ -20,6 +20,12 @@ public abstract class Definition
     /// <summary>Rises whenever the number changes; the old one stays beside it, frozen.</summary>
     public virtual int Revision => 1;
 
+    /// <summary>False for lesser variants and bands: a site must ask for them.</summary>
+    public virtual bool OnByDefault => true;
+
+    /// <summary>True for targets, predictions and model rates: computed when asked, never published.</summary>
+    public virtual bool ByHandOnly => false;
+
     /// <summary>Heading under which the catalogue lists it.</summary>
     public abstract string Purpose { get; }
 

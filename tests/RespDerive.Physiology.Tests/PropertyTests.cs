@@ -16,7 +16,7 @@ public sealed class PropertyTests
         Gen.Select(Gen.Bool.Array[kinds.Length], Gen.Select(Gen.Int[0, 11], Gen.Double[0, 1]).Array[kinds.Length]).Sample(
             (present, draws) =>
             {
-                var roots = new Roots(kinds.Select((kind, i) => new Root(kind, Draw(kind, draws[i]))).Where((_, i) => present[i]));
+                var roots = new Roots(kinds.Select((kind, i) => new Root(kind, Draw(kind, draws[i]))).Where((_, i) => present[i] || kinds[i].Assumed is not null));
                 var computed = Computation.Of(definition, roots);
                 if (computed.Withheld is not null)
                 {
@@ -40,6 +40,12 @@ public sealed class PropertyTests
         if (kind.IsCoded)
         {
             return draw.Sort == 0 ? double.NaN : draw.Sort == 1 ? kind.Codes.Count : Math.Floor(draw.At * kind.Codes.Count * 0.999);
+        }
+
+        // A constant is there even when nobody gives it, mostly with its assumed value.
+        if (kind.Assumed is { } assumed && draw.Sort > 5)
+        {
+            return assumed;
         }
 
         var greatest = Math.Min(kind.Greatest, 1e6);

@@ -10,7 +10,8 @@ namespace RespDerive.Tests;
 public sealed class OracleTests
 {
     private static readonly JsonObject[] Cases =
-        [.. JsonNode.Parse(File.ReadAllText(Path.Combine(AppContext.BaseDirectory, "oracle-cases.json")))!.AsArray().Select(one => one!.AsObject())];
+        [.. Directory.GetFiles(AppContext.BaseDirectory, "oracle*.json").Order(StringComparer.Ordinal)
+            .SelectMany(file => JsonNode.Parse(File.ReadAllText(file))!.AsArray().Select(one => one!.AsObject()))];
 
     public static TheoryData<string> Ids => [.. Cases.Select(one => (string)one["id"]!)];
 

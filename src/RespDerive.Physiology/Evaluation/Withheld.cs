@@ -30,6 +30,10 @@ public static class Withheld
     public const string HeightOutOfRange = "height-out-of-range";
     public const string Spo2Above97 = "spo2-above-97";
     public const string NotOnHighFlow = "not-on-high-flow";
+    public const string ExpiredExceedsArterial = "expired-exceeds-arterial";
+    public const string AlreadyCorrected = "already-temperature-corrected";
+    public const string TemperatureOutOfRange = "temperature-out-of-range";
+    public const string ConstantsMixed = "constants-mixed";
     public const string PressureUnknown = "pressure-unknown";
     public const string ConflictingInputs = "conflicting-inputs";
     public const string TimeUncertain = "time-uncertain";
@@ -67,6 +71,10 @@ public static class Withheld
         (HeightOutOfRange, "The height is outside the range the formula was made for (140 to 210 cm)."),
         (Spo2Above97, "Above an SpO2 of 97 % the dissociation curve is too flat."),
         (NotOnHighFlow, "The value is defined only for high-flow nasal oxygen."),
+        (ExpiredExceedsArterial, "Expired carbon dioxide is not below arterial: not simultaneous, or not what it is called."),
+        (AlreadyCorrected, "The blood gas is already corrected to the patient's temperature; it is never corrected twice."),
+        (TemperatureOutOfRange, "The temperature is outside the range the correction holds for (25 to 42 °C)."),
+        (ConstantsMixed, "Constants of different published sets are combined."),
         (PressureUnknown, "The barometric pressure is not known; it is never assumed."),
         (ConflictingInputs, "Two inputs of equal rank disagree."),
         (TimeUncertain, "The time of the anchor is not known to the minute."),

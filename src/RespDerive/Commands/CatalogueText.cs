@@ -99,6 +99,11 @@ internal static class CatalogueText
 
     private static string CalledFor(Calling calling)
     {
+        if (calling.Anchors.Count == 0)
+        {
+            return "by hand only; never published";
+        }
+
         var text = "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))
             + (calling.Cadence == Cadence.QuarterHour ? "; the first in each quarter of an hour" : "; each, or the first in each quarter of an hour of a streamed signal");
         text += calling.OnlyWith.Count > 0 ? "; only when the patient's record of the last 24 h shows that it applies" : "";
