@@ -19,6 +19,9 @@ public static class CarbonDioxideGates
     public static readonly Gate NotYetCorrected = new(Withheld.AlreadyCorrected, "the analyser already corrected the gas to the patient's temperature",
         [Kinds.TemperatureCorrected], x => x.Code(Kinds.TemperatureCorrected) == "true");
 
+    /// <summary>Raised when nothing tells whether the gas is already corrected.</summary>
+    public static readonly FlagRule CorrectionUnstated = new(Flags.CorrectionUnstated, [Kinds.TemperatureCorrected], x => !x.Has(Kinds.TemperatureCorrected));
+
     /// <summary>Range of the temperature corrections.</summary>
     public static readonly Gate TemperatureInRange = new(Withheld.TemperatureOutOfRange, "the temperature is below 25 or above 42 °C", [],
         x => x.Has(Kinds.BodyTemperature) && x[Kinds.BodyTemperature] is < 25 or > 42);

@@ -19,6 +19,7 @@ public static class Flags
     public const string OrderUnknown = "order-unknown";
     public const string SpecimenUnread = "specimen-unread";
     public const string OtherDevice = "other-device";
+    public const string CorrectionUnstated = "correction-unstated";
 #pragma warning restore CS1591
 
     private static readonly Dictionary<string, string> Lines = new(StringComparer.Ordinal)
@@ -37,6 +38,7 @@ public static class Flags
         [Spo2Above97] = "SpO2 above 97 %: the ratio says little about oxygenation.",
         [OrderUnknown] = "The source gave neither version nor time of change; arrival order decided.",
         [SpecimenUnread] = "The specimen named by the source could not be read.",
+        [CorrectionUnstated] = "Nothing says whether the analyser already corrected the gas to the patient's temperature; it must not be corrected twice.",
         [OtherDevice] = "The inputs come from different devices.",
     };
 

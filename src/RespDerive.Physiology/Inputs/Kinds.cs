@@ -89,7 +89,7 @@ public static class Kinds
 
     // constants of definitions; those of one published set belong together
     public static readonly Kind CO2Conversion = Kind.Quantity("co2-conversion-factor", "factor", "tension of 1 mL/min (STPD) of carbon dioxide in 1 L/min (BTPS)", Constant, "mm[Hg].L/mL", 0.86, 0.8635, Tolerance.None, assumed: 0.863);
-    public static readonly Kind CO2Solubility = Kind.Quantity("co2-solubility", "alpha", "solubility of carbon dioxide in plasma", Constant, "mmol/L/mm[Hg]", 0.0303, 0.0308, Tolerance.None, assumed: 0.0307);
+    public static readonly Kind CO2Solubility = Kind.Quantity("co2-solubility", "alphaCO2", "solubility of carbon dioxide in plasma", Constant, "mmol/L/mm[Hg]", 0.0303, 0.0308, Tolerance.None, assumed: 0.0307);
     public static readonly Kind CO2Pk = Kind.Quantity("carbonic-acid-pk", "pK", "apparent pK of carbonic acid in plasma", Constant, "[pH]", 6.095, 6.11, Tolerance.None, assumed: 6.105);
     public static readonly Kind CO2SolubilityZander = Fixed("co2-solubility-zander", "alphaZ", "solubility of carbon dioxide in plasma, Zander's set", "mmol/L/mm[Hg]", 0.0304);
     public static readonly Kind CO2PkZander = Fixed("carbonic-acid-pk-zander", "pKZ", "apparent pK of carbonic acid, Zander's set", "[pH]", 6.1);

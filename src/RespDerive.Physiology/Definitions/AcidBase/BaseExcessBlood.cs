@@ -30,7 +30,7 @@ public sealed class BaseExcessBlood : Definition
     public override string Summary => "Base excess of blood from pH, carbon dioxide tension and haemoglobin.";
 
     /// <inheritdoc/>
-    public override string Equation => "BE = BEClsi; by hand BEZander when SO2 is given, BESiggaard when ctHb is given";
+    public override string Equation => "BE = (1 − 0.014·Hb)·((HCO3 − 24.8) + (1.43·Hb + 7.7)·(pH − 7.4)); by hand BEZander when SO2 is given, BESiggaard when ctHb is given";
 
     /// <inheritdoc/>
     public override string Assumptions => "Arterial blood measured at 37 °C; pH 6.8 to 7.8, PaCO2 10 to 150 mm[Hg]; Hb in g/dL of the same sample, else of the 6 h before. Constants: CLSI C46 (24.8, 1.43, 7.7; bicarbonate with 0.0307 and 6.105).";
@@ -53,7 +53,7 @@ public sealed class BaseExcessBlood : Definition
         CommonGates.ArterialCarbonDioxide with { TrippedBy = [.. Example, ("sample", "venous")] },
         CarbonDioxideGates.NotYetCorrected with { TrippedBy = [.. Example, ("corrected", "true")] },
         CarbonDioxideGates.BaseExcessInRange with { TrippedBy = [("pH", 6.7, "[pH]"), ("PaCO2", 60, "mm[Hg]"), ("Hb", 12, "g/dL")] },
-        CarbonDioxideGates.ClsiBicarbonate with { TrippedBy = [.. Example, ("alpha", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")] },
+        CarbonDioxideGates.ClsiBicarbonate with { TrippedBy = [.. Example, ("alphaCO2", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")] },
     ];
 
     /// <inheritdoc/>
@@ -74,7 +74,7 @@ public sealed class BaseExcessBlood : Definition
         new(Evidence.Limit, "at pH 7.4 the bicarbonate deficit less the share of the cells: −10·(1 − 0.014·10)", -8.6, 1e-9,
             ("HCO3", 14.8, "mmol/L"), ("pH", 7.4, "[pH]"), ("Hb", 10, "g/dL")),
         new(Evidence.Limit, "CLSI bicarbonate 10·0.0307·50 at pH 7.105, Hb 10: 0.86·(−9.45 − 22·0.295)", -13.7084, 1e-6,
-            ("pH", 7.105, "[pH]"), ("PaCO2", 50, "mm[Hg]"), ("Hb", 10, "g/dL"), ("alpha", 0.0307, "mmol/L/mm[Hg]"), ("pK", 6.105, "[pH]")),
+            ("pH", 7.105, "[pH]"), ("PaCO2", 50, "mm[Hg]"), ("Hb", 10, "g/dL"), ("alphaCO2", 0.0307, "mmol/L/mm[Hg]"), ("pK", 6.105, "[pH]")),
     ];
 
     private static Given[] Example => [("pH", 7.2, "[pH]"), ("PaCO2", 60, "mm[Hg]"), ("Hb", 12, "g/dL")];

@@ -44,7 +44,7 @@ public sealed class BaseExcessEcf : Definition
         CommonGates.ArterialCarbonDioxide with { TrippedBy = [.. Example, ("sample", "venous")] },
         CarbonDioxideGates.NotYetCorrected with { TrippedBy = [.. Example, ("corrected", "true")] },
         CarbonDioxideGates.BaseExcessInRange with { TrippedBy = [("pH", 6.7, "[pH]"), ("PaCO2", 60, "mm[Hg]")] },
-        CarbonDioxideGates.ClsiBicarbonate with { TrippedBy = [.. Example, ("alpha", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")] },
+        CarbonDioxideGates.ClsiBicarbonate with { TrippedBy = [.. Example, ("alphaCO2", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")] },
     ];
 
     /// <inheritdoc/>
@@ -64,7 +64,7 @@ public sealed class BaseExcessEcf : Definition
         new(Evidence.Limit, "buffering of 16.2 mmol/L per pH unit: a tenth of a unit above the reference point", 1.62, 1e-9,
             ("HCO3", 24.8, "mmol/L"), ("pH", 7.5, "[pH]")),
         new(Evidence.Limit, "CLSI bicarbonate 10·0.0307·50 at pH 7.105: 15.35 − 24.8 − 16.2·0.295", -14.229, 1e-9,
-            ("pH", 7.105, "[pH]"), ("PaCO2", 50, "mm[Hg]"), ("alpha", 0.0307, "mmol/L/mm[Hg]"), ("pK", 6.105, "[pH]")),
+            ("pH", 7.105, "[pH]"), ("PaCO2", 50, "mm[Hg]"), ("alphaCO2", 0.0307, "mmol/L/mm[Hg]"), ("pK", 6.105, "[pH]")),
     ];
 
     private static Given[] Example => [("pH", 7.2, "[pH]"), ("PaCO2", 60, "mm[Hg]")];

@@ -27,7 +27,7 @@ public sealed class Bicarbonate : Definition
     public override string Summary => "Actual bicarbonate from pH and carbon dioxide tension.";
 
     /// <inheritdoc/>
-    public override string Equation => "HCO3 = alpha·PCO2·10^(pH − pK)";
+    public override string Equation => "HCO3 = alphaCO2·PCO2·10^(pH − pK)";
 
     /// <inheritdoc/>
     public override string Assumptions => "Arterial blood measured at 37 °C. Constants: CLSI C46 (0.0307 mmol/L/mm[Hg], 6.105) unless another published set is given whole: Zander (0.0304, 6.1), Siggaard-Andersen (0.230 mmol/L/kPa, 6.1). No range given by the source.";
@@ -49,11 +49,11 @@ public sealed class Bicarbonate : Definition
     [
         CommonGates.ArterialCarbonDioxide with { TrippedBy = [.. Example, ("sample", "venous")] },
         CarbonDioxideGates.NotYetCorrected with { TrippedBy = [.. Example, ("corrected", "true")] },
-        CarbonDioxideGates.OneBicarbonateSet with { TrippedBy = [.. Example, ("alpha", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.105, "[pH]")] },
+        CarbonDioxideGates.OneBicarbonateSet with { TrippedBy = [.. Example, ("alphaCO2", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.105, "[pH]")] },
     ];
 
     /// <inheritdoc/>
-    public override IReadOnlyDictionary<string, Kind> Symbols { get; } = new Dictionary<string, Kind> { ["PCO2"] = Kinds.PaCO2 };
+    public override IReadOnlyDictionary<string, Kind> Symbols { get; } = new Dictionary<string, Kind> { ["PCO2"] = Kinds.PaCO2, ["alpha"] = Kinds.CO2Solubility };
 
     /// <inheritdoc/>
     public override IReadOnlyList<Citation> Citations =>
@@ -67,9 +67,9 @@ public sealed class Bicarbonate : Definition
     public override IReadOnlyList<Vector> Vectors =>
     [
         new(Evidence.Published, "Lang and Zander 2002: 24.26 mmol/L at 40 mm[Hg] and 7.40", 24.26, 0.005,
-            ("PaCO2", 40, "mm[Hg]"), ("pH", 7.4, "[pH]"), ("alpha", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")),
+            ("PaCO2", 40, "mm[Hg]"), ("pH", 7.4, "[pH]"), ("alphaCO2", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")),
         new(Evidence.Published, "public test data of an open package for carbon dioxide content: 5 kPa, 7.40", 22.74763, 0.0005,
-            ("PaCO2", 5, "kPa"), ("pH", 7.4, "[pH]"), ("alpha", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")),
+            ("PaCO2", 5, "kPa"), ("pH", 7.4, "[pH]"), ("alphaCO2", 0.0304, "mmol/L/mm[Hg]"), ("pK", 6.1, "[pH]")),
         new(Evidence.Limit, "one pH unit above pK', ten times the dissolved gas: 10·0.0307·50", 15.35, 1e-9,
             ("PaCO2", 50, "mm[Hg]"), ("pH", 7.105, "[pH]")),
     ];

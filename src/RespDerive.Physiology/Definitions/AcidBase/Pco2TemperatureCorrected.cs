@@ -50,6 +50,9 @@ public sealed class Pco2TemperatureCorrected : Definition
     ];
 
     /// <inheritdoc/>
+    public override IReadOnlyList<FlagRule> FlagRules => [CarbonDioxideGates.CorrectionUnstated];
+
+    /// <inheritdoc/>
     public override IReadOnlyDictionary<string, Kind> Symbols { get; } = new Dictionary<string, Kind> { ["PCO2_37"] = Kinds.PaCO2 };
 
     /// <inheritdoc/>

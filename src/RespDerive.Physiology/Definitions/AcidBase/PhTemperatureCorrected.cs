@@ -50,6 +50,9 @@ public sealed class PhTemperatureCorrected : Definition
     ];
 
     /// <inheritdoc/>
+    public override IReadOnlyList<FlagRule> FlagRules => [CarbonDioxideGates.CorrectionUnstated];
+
+    /// <inheritdoc/>
     public override IReadOnlyDictionary<string, Kind> Symbols { get; } = new Dictionary<string, Kind> { ["pH37"] = Kinds.PhArterial };
 
     /// <inheritdoc/>

@@ -52,6 +52,9 @@ public sealed class Po2TemperatureCorrected : Definition
     ];
 
     /// <inheritdoc/>
+    public override IReadOnlyList<FlagRule> FlagRules => [CarbonDioxideGates.CorrectionUnstated];
+
+    /// <inheritdoc/>
     public override IReadOnlyDictionary<string, Kind> Symbols { get; } = new Dictionary<string, Kind> { ["PO2_37"] = Kinds.PaO2 };
 
     /// <inheritdoc/>

@@ -48,6 +48,9 @@ public sealed class RespiratoryRateForTarget : Definition
     [
         CommonGates.ArterialCarbonDioxide with { TrippedBy = [.. Example, ("sample", "venous")] },
         CommonGates.Ecls with { TrippedBy = [.. Example, ("ecls", "true")] },
+        new Gate(Withheld.RateAboveCeiling, "the rate would be above 35 /min", [],
+            x => x.Has(Rate) && x.Has(CarbonDioxideSlots.PaCO2) && x.Has(CarbonDioxideSlots.Target) && Value.Formula!(x) > 35,
+            ("RR", 30, "/min"), ("PaCO2", 60, "mm[Hg]"), ("target", 40, "mm[Hg]")),
     ];
 
     /// <inheritdoc/>
