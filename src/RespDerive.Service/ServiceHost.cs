@@ -80,19 +80,28 @@ public static class ServiceHost
     public static ServiceOptions Options(IConfiguration configuration)
     {
         ArgumentNullException.ThrowIfNull(configuration);
+        var section = configuration.GetSection("RespDerive");
         var options = new ServiceOptions();
-        var errors = new List<string>();
+        var bound = Binding(() => section.Bind(options));
+
+        // Apart, since an unknown key stops the binding of what comes after it.
+        var unknown = Binding(() => section.Bind(new ServiceOptions(), binder => binder.ErrorOnUnknownConfiguration = true));
+        string[] errors = bound is not null ? [bound, .. unknown is null || unknown == bound ? [] : new[] { unknown }]
+            : [.. unknown is null ? [] : new[] { unknown }, .. OptionsCheck.Errors(options)];
+        return errors.Length == 0 ? options : throw new OptionsValidationException("RespDerive", typeof(ServiceOptions), errors);
+    }
+
+    private static string? Binding(Action bind)
+    {
         try
         {
-            configuration.GetSection("RespDerive").Bind(options, binder => binder.ErrorOnUnknownConfiguration = true);
+            bind();
+            return null;
         }
         catch (InvalidOperationException exception)
         {
-            errors.Add((exception.InnerException ?? exception).Message);
+            return exception.Message;
         }
-
-        errors.AddRange(OptionsCheck.Errors(options));
-        return errors.Count == 0 ? options : throw new OptionsValidationException("RespDerive", typeof(ServiceOptions), errors);
     }
 
     /// <summary>No request log: paths and queries name patients. HTTP clients are our own and log nothing.</summary>

@@ -1,1 +1,21 @@
-Console.WriteLine("benchmarks");
+using BenchmarkDotNet.Running;
+using RespDerive.Benchmarks;
+using RespDerive.Benchmarks.EndToEnd;
+using RespDerive.Benchmarks.Stages;
+
+// "end-to-end [seconds [rounds]]" loads a whole service; any other words choose stages by name; none: all stages.
+if (args is ["end-to-end", .. var figures])
+{
+    await Comparison.RunAsync(figures);
+    return;
+}
+
+Type[] stages = [typeof(Read), typeof(Evaluate), typeof(TurnInMemory), typeof(TurnFromStore), typeof(Compute), typeof(Commit), typeof(Render)];
+Console.WriteLine(Machine.Line());
+Table.Head();
+foreach (var stage in stages.Where(stage => args.Length == 0 || args.Any(word => stage.Name.Contains(word, StringComparison.OrdinalIgnoreCase))))
+{
+    Table.Rows(BenchmarkRunner.Run(stage, Measuring.Of(stage)));
+}
+
+Console.WriteLine(Machine.Line());

@@ -20,7 +20,7 @@ internal static class Histories
         [Kinds.Peak, Kinds.Plateau, Kinds.TidalVolumeExpired, Kinds.PeepTotal],
     ];
 
-    private static Gen<Reading> ReadingOf(Kind[] theme) =>
+    private static Gen<Reading> ReadingOf(Kind[] theme, double step) =>
         from kind in AnyOf(theme)
         from slot in Gen.Int[0, 30]
         from jitter in Gen.Int[0, 3]
@@ -29,18 +29,22 @@ internal static class Histories
         from device in AnyOf<string?>(null, "Device/v", "Device/w")
         from specimen in AnyOf<string?>(null, null, "Specimen/a", "Specimen/b")
         from preliminary in Gen.Int[0, 7]
-        select Make(kind, (slot * 2.5) + (jitter * 0.5), level, refused == 0, device, specimen, preliminary == 0);
+        select Make(kind, (slot * step) + (jitter * 0.5), level, refused == 0, device, specimen, preliminary == 0);
 
-    private static Gen<Version> VersionOf(Kind[] theme) =>
+    private static Gen<Version> VersionOf(Kind[] theme, double step) =>
         from id in Gen.Int[0, 24]
         from number in Gen.Int[1, 4]
-        from reading in ReadingOf(theme)
+        from reading in ReadingOf(theme, step)
         from withdrawn in Gen.Int[0, 5]
         from person in Gen.Int[0, 12]
         select person == 0 ? OfPerson(number) : Of(id, number, withdrawn == 0 ? null : reading);
 
     /// <summary>Up to 45 versions of up to 25 resources.</summary>
-    public static readonly Gen<Version[]> One = AnyOf(Themes).SelectMany(theme => VersionOf(theme).Array[1, 45]);
+    public static readonly Gen<Version[]> One =
+        from theme in AnyOf(Themes)
+        from step in AnyOf(0.5, 2.5, 2.5, 61)
+        from versions in VersionOf(theme, step).Array[1, 45]
+        select versions;
 
     private static Gen<T> AnyOf<T>(params T[] items) => Gen.Int[0, items.Length - 1].Select(i => items[i]);
 

@@ -72,4 +72,14 @@ public sealed class TurnTests
         _history.Apply(Turn.Run(_evaluator, _history, [], Adult("female")));
         Assert.Equal(66.1m, Current("predicted-body-weight").Published);
     }
+
+    [Fact]
+    public void New_version_of_the_person_with_the_same_sex_and_birth_date_revises_nothing()
+    {
+        _history.Apply(Turn.Run(_evaluator, _history, [], Adult()));
+        Arrive(Read("h", Kinds.Height, 175, 0));
+        var changes = Turn.Run(_evaluator, _history, [], Adult() with { Version = "2" });
+        Assert.Empty(changes.Outcomes);
+        Assert.Equal("2", changes.Person!.Version);
+    }
 }

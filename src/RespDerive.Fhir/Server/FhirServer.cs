@@ -146,6 +146,13 @@ public sealed partial class FhirServer
         return await WriteAsync(request, resource, false, cancel);
     }
 
+    /// <summary>Deletes a resource that should not have been written. False when the server did not do it.</summary>
+    public async Task<bool> DeleteAsync(string type, string id, CancellationToken cancel = default)
+    {
+        var reply = await SendAsync(new HttpRequestMessage(HttpMethod.Delete, _base.At($"{type}/{id}")), cancel);
+        return reply.Status is (>= 200 and <= 299) or 404 or 410;
+    }
+
     /// <summary>Posts a transaction and looks at every entry of the answer.</summary>
     public async Task<TransactionAnswer> TransactAsync(Bundle transaction, CancellationToken cancel = default)
     {

@@ -175,6 +175,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
     /// <summary>What a reader of a plain list needs beside the value.</summary>
     private static string Aside(UsedInput input) => input switch
     {
+        { Assumed: true } when input.Kind == Kinds.BarometricPressure.Key => " (site policy)",
         { Assumed: true } => " (assumed)",
         { GapMinutes: <= -1 and { } before } => $" ({Minutes(-before)} min before)",
         { GapMinutes: >= 1 and { } after } => $" ({Minutes(after)} min after)",

@@ -43,7 +43,7 @@ public sealed class DynamicCompliance : Definition
     public override (double Least, double Greatest) Usual => (15, 80);
 
     /// <inheritdoc/>
-    public override Calling Calling => new([Kinds.Peak], Cadence.QuarterHour);
+    public override Calling Calling => new([Kinds.Peak]);
 
     /// <inheritdoc/>
     public override IReadOnlyList<Gate> Gates =>

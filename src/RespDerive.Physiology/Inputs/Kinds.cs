@@ -26,7 +26,7 @@ public static class Kinds
     // oxygen
     public static readonly Kind FiO2Measured = Kind.Quantity("fio2-measured", "FiO2meas", "inspired oxygen fraction, measured", Measurement, "1", 0.205, 1, Tolerance.Limit(0.025, 0.025, OxygenMonitor), Withheld.Fio2UnitImplausible);
     public static readonly Kind FiO2Set = Kind.Quantity("fio2-set", "FiO2set", "inspired oxygen fraction, set", Setting, "1", 0.205, 1, Tolerance.Limit(0.03, 0, "blender ±3 vol%, own judgement"), Withheld.Fio2UnitImplausible);
-    public static readonly Kind FiO2 = Kind.Quantity("fio2", "FiO2", "inspired oxygen fraction", Setting, "1", 0.205, 1, Tolerance.Limit(0.03, 0, "blender ±3 vol%, own judgement"), Withheld.Fio2UnitImplausible);
+    public static readonly Kind FiO2 = Kind.Quantity("fio2", "FiO2", "inspired oxygen fraction", Measurement, "1", 0.205, 1, Tolerance.Limit(0.03, 0, "blender ±3 vol%, own judgement"), Withheld.Fio2UnitImplausible);
     public static readonly Kind OxygenFlow = Kind.Quantity("oxygen-flow", "O2flow", "supplemental oxygen flow", Measurement, "L/min", 0, 100, Tolerance.Limit(0, 0.1, Judgement));
     public static readonly Kind SpO2 = Kind.Quantity("spo2", "SpO2", "oxygen saturation by pulse oximetry", Measurement, "%", 40, 100, Tolerance.Deviation(3, 0, "pulse oximetry accuracy 2 to 4 % root mean square, ISO 80601-2-61"));
 

@@ -47,7 +47,7 @@ internal sealed class Transaction(Writing writing, ResourceStore store, Func<Fhi
         }
         ResourceRules.RequireType(entry.Resource!, entry.Type);
         var condition = entry.Method == "POST" ? entry.IfNoneExist : entry.Id is null ? entry.Query : null;
-        var matches = condition is null ? [] : writing.Matching(entry.Type, condition);
+        var matches = condition is null ? [] : entry.Method == "POST" ? writing.Seen(entry.Type, condition) : writing.Matching(entry.Type, condition);
         if (matches.Count > 1)
         {
             throw Refusal.Precondition($"entry {entry.Position}: the condition matches more than one resource");

@@ -52,14 +52,17 @@ internal sealed class Writing(ResourceStore store, Faults faults, bool validate,
             : throw Refusal.Precondition("the condition has no parameter, or one that is not supported");
     }
 
+    /// <summary>What a conditional create sees; nothing when a race is switched on.</summary>
+    public IReadOnlyList<StoredVersion> Seen(string type, string condition) => faults.TakeRace() ? [] : Matching(type, condition);
+
     public FhirAnswer Create(string type, JsonObject resource, string? ifNoneExist, string? newId)
     {
         Check(resource);
         return store.Write(() =>
         {
-            if (ifNoneExist is not null && !faults.TakeRace())
+            if (ifNoneExist is not null)
             {
-                switch (Matching(type, ifNoneExist))
+                switch (Seen(type, ifNoneExist))
                 {
                     case []:
                         break;

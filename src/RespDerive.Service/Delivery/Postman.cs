@@ -48,6 +48,7 @@ internal sealed class Postman(Target target, Site site, Store store, IOptions<Se
         var answer = await SendAsync(renderer, outcome, edition, cancel);
         return answer switch
         {
+            ServerAnswer.Delivered { Existed: false } there when edition.PreviousVersion is null && !await IsOnlyOneAsync(delivery.Identity, there.Id, cancel) => new Became.Again(null),
             ServerAnswer.Delivered { Existed: false } there => Delivered(outcome, edition, there),
             ServerAnswer.Delivered or ServerAnswer.Conflict or ServerAnswer.Unknown => await LookAsync(delivery, cancel) ?? new Became.Again(null),
             ServerAnswer.Gone => new Became.Parked("deleted-at-server", "The result was deleted at the server."),
@@ -71,6 +72,12 @@ internal sealed class Postman(Target target, Site site, Store store, IOptions<Se
             lock (_lock)
             {
                 _libraries.UnionWith(libraries.Select(entry => entry.Key));
+            }
+
+            // Nothing was written, since the result is there already; what came along would testify to an edition that never was.
+            if (answer.Entries is [ServerAnswer.Delivered { Existed: true }, ServerAnswer.Delivered surplus, ..])
+            {
+                await Server.DeleteAsync("Provenance", surplus.Id, cancel);
             }
 
             return answer.Entries[0];
@@ -125,8 +132,35 @@ internal sealed class Postman(Target target, Site site, Store store, IOptions<Se
                 : new Became.Parked($"http-{answer.Status}", "The result cannot be read at the server.");
         }
 
-        return Judge(delivery, id, answer);
+        var judged = Judge(delivery, id, answer);
+        return judged is Became.Delivered there && !await EvidencedAsync(there.Outcome, EditionRules.Of(delivery, existed: true)!.Value.Edition, id, cancel)
+            ? new Became.Again(null)
+            : judged;
     }
+
+    /// <summary>True when the Provenance of an edition is at the server; sent again when a transaction was carried out by half.</summary>
+    private async Task<bool> EvidencedAsync(Outcome outcome, Edition edition, string id, CancellationToken cancel)
+    {
+        var renderer = target.Renderer;
+        try
+        {
+            if (await Server.FindProvenanceAsync($"Observation/{id}", renderer.Words.ProvenanceId, renderer.ProvenanceId(outcome, edition), cancel) is not null)
+            {
+                return true;
+            }
+
+            var provenance = renderer.Provenance(outcome, edition, $"Observation/{id}");
+            return await (provenance.Id is null ? Server.CreateAsync(provenance, null, cancel) : Server.UpdateAsync(provenance, null, cancel)) is ServerAnswer.Delivered;
+        }
+        catch (SearchFailedException)
+        {
+            return false;
+        }
+    }
+
+    /// <summary>False when a conditional create raced and another result with our identifier stands; every other one is retired.</summary>
+    private async Task<bool> IsOnlyOneAsync(Guid identity, string id, CancellationToken cancel) =>
+        options.Value.Delivery.OwnIds || await FindAsync(identity, cancel) is not { Count: > 0 } found || found[0] == id;
 
     /// <summary>The ids of the results with our identifier, duplicates retired; null when the server could not be asked.</summary>
     private async Task<IReadOnlyList<string>?> FindAsync(Guid identity, CancellationToken cancel)

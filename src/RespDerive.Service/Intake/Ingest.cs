@@ -22,7 +22,7 @@ internal sealed class Ingest(Store store, Site site, IGrainFactory grains, TimeP
     private static readonly Counter<long> Journalled = Telemetry.Meter.CreateCounter<long>("respderive.intake.journalled", "{resource}", "New resource versions");
 
     /// <summary>Journals resources; the answer gives, per resource, the reason it was not kept, or null.</summary>
-    public async Task<IReadOnlyList<string?>> AcceptAsync(IReadOnlyList<Brought> brought, Cursor? cursor = null)
+    public async Task<IReadOnlyList<string?>> AcceptAsync(IReadOnlyList<Brought> brought)
     {
         var now = time.GetUtcNow();
         var reasons = new string?[brought.Count];
@@ -41,7 +41,7 @@ internal sealed class Ingest(Store store, Site site, IGrainFactory grains, TimeP
             }
         }
 
-        var appended = arrivals.Count == 0 && cursor is null ? [] : await store.AppendAsync(arrivals, cursor);
+        var appended = arrivals.Count == 0 ? [] : await store.AppendAsync(arrivals);
         for (var i = 0; i < appended.Count; i++)
         {
             if (appended[i].New)

@@ -103,7 +103,7 @@ internal sealed class Webhook(Store store, Ingest ingest, Awaited awaited, Site 
         }
 
         var reasons = await ingest.AcceptAsync(notification.Brought);
-        return !reasons.Any(reason => reason is Fhir.Refusals.NotJson or Fhir.Refusals.NotFhir);
+        return !reasons.All(reason => reason is Fhir.Refusals.NotJson or Fhir.Refusals.NotFhir);
     }
 
     private IReadOnlyList<string> Everything() => [.. options.Value.Intake.Searches.Select(criterion => Awaited.QueryMark + criterion)];

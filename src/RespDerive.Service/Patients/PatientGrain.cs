@@ -19,22 +19,29 @@ internal sealed class PatientGrain(PatientTurn turn, TimeProvider time, ILogger<
     /// <summary>Messages of one moment come one by one; waiting this long lets one turn see them together.</summary>
     private static readonly TimeSpan Gather = TimeSpan.FromMilliseconds(400);
 
+    private int _failures;
+    private DateTimeOffset _notBefore;
+
     /// <inheritdoc/>
     public async Task Wake()
     {
         var patient = this.GetPrimaryKeyLong();
         try
         {
-            if (turn.IsOpen(patient))
+            if (time.GetUtcNow() >= _notBefore && turn.IsOpen(patient))
             {
                 await Task.Delay(Gather, time);
                 while (await turn.TakeAsync(patient))
                 {
                 }
+
+                _failures = 0;
             }
         }
         catch (Exception exception)
         {
+            // A patient whose turn keeps failing must not keep the others waiting.
+            _notBefore = time.GetUtcNow() + BackOff.After(_failures++, TimeSpan.FromMinutes(5), $"{patient}");
             Trouble.Report(logger, exception, $"A turn of patient {patient} failed and will be swept up");
         }
     }

@@ -28,7 +28,7 @@ internal static class Calls
                 {
                     rationed.Add((reading, rank));
                 }
-                else if (reading.At >= from && reading.At <= to && !BetterNear(reading, kinds.Take(rank), slice))
+                else if (reading.At >= from && reading.At <= to && !IsOutranked(reading, kinds, slice))
                 {
                     calls.Add(new Call(reading, null));
                 }
@@ -49,8 +49,12 @@ internal static class Calls
         return calls;
     }
 
-    private static bool BetterNear(Reading reading, IEnumerable<Kind> better, Slice slice) =>
-        better.Any(kind => slice.Between(kind, reading.At.Minus(SameBreath), reading.At.Plus(SameBreath)).Length > 0);
+    /// <summary>True when a reading of a better kind stands for the same breath.</summary>
+    /// <param name="reading">A reading of one of the kinds.</param>
+    /// <param name="kinds">Kinds, best first.</param>
+    /// <param name="slice">The timeline.</param>
+    public static bool IsOutranked(Reading reading, IReadOnlyList<Kind> kinds, Slice slice) =>
+        kinds.TakeWhile(kind => kind != reading.Kind).Any(kind => slice.Between(kind, reading.At.Minus(SameBreath), reading.At.Plus(SameBreath)).Length > 0);
 
     private static bool InContext(Calling calling, Reading anchor, Slice slice) =>
         (calling.OnlyWith.Count == 0 || slice.Last(calling.OnlyWith, anchor.At, calling.Recent) is not null)

@@ -17,7 +17,7 @@ public sealed class Evaluator
     public Evaluator(Catalogue catalogue, PolicyBook policies, string site)
     {
         (Catalogue, Policies, _site) = (catalogue, policies, NameBasedUuid.Site(site));
-        _reaches = catalogue.All.ToDictionary(definition => definition.Key, definition => new Reach(definition, catalogue), StringComparer.Ordinal);
+        _reaches = catalogue.All.ToDictionary(definition => definition.Key, definition => new Reach(definition, catalogue, policies.LongestSetting), StringComparer.Ordinal);
     }
 
     /// <summary>Definitions.</summary>
@@ -44,7 +44,7 @@ public sealed class Evaluator
             return blank with
             {
                 Withheld = refusal,
-                Considered = explain ? [Tell(definition.Result.Name, anchor, refusal)] : [],
+                Considered = explain ? [Story.Tell(anchor.Kind.Name, anchor, refusal)] : [],
             };
         }
 
@@ -65,7 +65,7 @@ public sealed class Evaluator
         };
         if (withheld is not null)
         {
-            return outcome with { Withheld = withheld, Missing = gathering.Missing, Considered = explain ? Story(gathering, slice, definition, anchor) : [] };
+            return outcome with { Withheld = withheld, Missing = explain ? [.. gathering.Missing.Select(slot => slot.Name)] : [], Considered = explain ? Story.Of(gathering, slice, definition, anchor, withheld) : [] };
         }
 
         return outcome with
@@ -109,21 +109,4 @@ public sealed class Evaluator
         {
             Share = shares.Where(share => share.Transducer is null && share.Kind.Key == input.Kind).Sum(share => share.Fraction),
         })];
-
-    /// <summary>Readings that were looked at: those that block, and for what stayed missing the nearest outside the window.</summary>
-    private static Candidate[] Story(Gathering gathering, Slice slice, Definition definition, Reading anchor)
-    {
-        var blocked = gathering.Looked.Where(looked => looked.Choice.Blocked is not null)
-            .SelectMany(looked => looked.Choice.Readings.Select(reading => Tell(looked.Input, reading, looked.Choice.Blocked!)));
-        var outside = gathering.Reasons.Count == 0 ? [] : definition.Result.Needs
-            .SelectMany(slot => slot.Kinds.SelectMany(kind => kind.Formula is null ? [kind] : kind.Needs.SelectMany(inner => inner.Kinds)).Select(kind => (slot, kind)))
-            .Where(entry => entry.kind != anchor.Kind && !gathering.Readings.Any(reading => reading.Kind == entry.kind))
-            .Select(entry => (entry.slot, reading: slice.Of(entry.kind).MinBy(reading => (reading.At - anchor.At).Duration())))
-            .Where(entry => entry.reading is not null)
-            .Select(entry => Tell(entry.slot.Name, entry.reading!, entry.reading!.Refused ?? Withheld.StalePair));
-        return [.. blocked.Concat(outside).Distinct()];
-    }
-
-    private static Candidate Tell(string input, Reading reading, string reason) =>
-        new(input, reading.VersionedReference, reading.AtText, reading.Given, reading.GivenUnit, reason);
 }

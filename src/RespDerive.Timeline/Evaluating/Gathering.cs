@@ -12,8 +12,11 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
     /// <summary>Withheld codes of slots that could not be filled.</summary>
     public SortedSet<string> Reasons { get; } = new(StringComparer.Ordinal);
 
-    /// <summary>Names of slots that found nothing at all.</summary>
-    public List<string> Missing { get; } = [];
+    /// <summary>Slots that found nothing at all.</summary>
+    public List<Slot> Missing { get; } = [];
+
+    /// <summary>What gates looked at.</summary>
+    public List<(Kind Kind, IReadOnlyList<Reading> Readings)> Evidence { get; } = [];
 
     /// <summary>Flags of readings and pairings used.</summary>
     public SortedSet<string> Flags { get; } = new(StringComparer.Ordinal);
@@ -77,7 +80,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         }
 
         Reasons.Add(refusedSetPeep ? Withheld.NoPeepTotal : slot.Missing);
-        Missing.Add(slot.Name);
+        Missing.Add(slot);
     }
 
     /// <summary>Fills one option, or leaves everything as it was. Reasons are given only when the option is the one that counts and cannot be filled.</summary>
@@ -88,7 +91,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         var reasons = new List<string>();
         foreach (var term in option.Terms)
         {
-            if (Constant(term) || Personal(term))
+            if (Constant(term, slot, reasons) || Personal(term))
             {
                 continue;
             }
@@ -108,7 +111,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
                     return (false, []);
                 }
 
-                Missing.AddRange(derived.Result.Needs.Where(inner => inner.Kinds.Intersect(derived.Calling.Anchors).Any()).Select(inner => inner.Name));
+                Missing.AddRange(derived.Result.Needs.Where(inner => inner.Kinds.Intersect(derived.Calling.Anchors).Any()));
                 return (false, MissingOf(derived));
             }
             else if (derived is null)
@@ -156,7 +159,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         [derived.Result.Needs.FirstOrDefault(slot => slot.Kinds.Intersect(derived.Calling.Anchors).Any())?.Missing ?? Withheld.InputMissing];
 
     /// <summary>Constants of the policy or the definition.</summary>
-    private bool Constant(Term term)
+    private bool Constant(Term term, Slot slot, List<string> reasons)
     {
         if (term.Pairing is not Pairing.Site || term.AnyOf.Count != 1)
         {
@@ -166,7 +169,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         var kind = term.AnyOf[0];
         if (kind == Kinds.BarometricPressure)
         {
-            return StationPressure();
+            return StationPressure(slot, reasons);
         }
 
         var value = kind == Kinds.RespiratoryQuotient ? policy.RespiratoryQuotient : kind.Assumed;
@@ -178,7 +181,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         return value is not null;
     }
 
-    private bool StationPressure()
+    private bool StationPressure(Slot slot, List<string> reasons)
     {
         if (_roots.Any(entry => entry.Root.Kind == Kinds.BarometricPressure))
         {
@@ -194,6 +197,11 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
         if (pressure.Reading is null)
         {
             AddConstant(Kinds.BarometricPressure, pressure.Value, pressure.Tolerance);
+        }
+        else if (pressure.Reading.Refused is { } code)
+        {
+            reasons.Add(code);
+            _looked.Add((slot.Name, Choice.Of(pressure.Reading)));
         }
         else
         {
@@ -234,7 +242,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
             return;
         }
 
-        if (kind == Kinds.BarometricPressure && SitePressure.Of(policy, anchor, slice) is { } pressure)
+        if (kind == Kinds.BarometricPressure && SitePressure.Of(policy, anchor, slice) is { Reading: not { Usable: false } } pressure)
         {
             IReadOnlyList<Reading> behind = pressure.Reading is null ? [] : [pressure.Reading];
             _roots.Add((new Root(kind, pressure.Value, null, pressure.Reading is null, pressure.Tolerance),
@@ -249,6 +257,7 @@ internal sealed class Gathering(Slice slice, Policy policy, Catalogue catalogue,
 
         if (Circumstances.Tell(kind, anchor, slice, policy) is { } finding)
         {
+            Evidence.Add((kind, finding.Readings));
             _roots.Add((new Root(kind, finding.Value, Tolerance: SiteTolerance(kind)), Describe(kind, finding.Value, finding.Readings) with { GateOnly = true }));
         }
     }

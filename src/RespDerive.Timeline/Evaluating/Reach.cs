@@ -26,9 +26,6 @@ internal sealed class Reach
     /// <summary>Readings of one sample or panel are looked for this far to both sides.</summary>
     public static readonly TimeSpan SampleWindow = TimeSpan.FromHours(1);
 
-    /// <summary>Longest validity of any setting.</summary>
-    public static readonly TimeSpan SettingWindow = TimeSpan.FromHours(24);
-
     /// <summary>Evidence of effort is looked for this far to both sides.</summary>
     public static readonly TimeSpan EffortWindow = TimeSpan.FromMinutes(5);
 
@@ -37,9 +34,14 @@ internal sealed class Reach
 
     private static readonly TimeSpan CopyWindow = TimeSpan.FromMinutes(2);
     private readonly Dictionary<Kind, Span> _spans = [];
+    private readonly TimeSpan _settingMaxAge;
 
-    public Reach(Definition definition, Catalogue catalogue)
+    /// <param name="definition">The definition.</param>
+    /// <param name="catalogue">Definitions it may be chained to.</param>
+    /// <param name="settingMaxAge">Longest validity of any setting under any policy of the site.</param>
+    public Reach(Definition definition, Catalogue catalogue, TimeSpan settingMaxAge)
     {
+        _settingMaxAge = settingMaxAge;
         var here = default(Span);
         foreach (var anchor in definition.Calling.Anchors)
         {
@@ -111,7 +113,7 @@ internal sealed class Reach
         foreach (var kind in definition.Watched)
         {
             Person |= kind == Kinds.Age || kind == Kinds.Sex;
-            foreach (var (read, span) in Circumstances.Reads(kind))
+            foreach (var (read, span) in Circumstances.Reads(kind, _settingMaxAge))
             {
                 Add(read, span, outer);
             }
@@ -121,7 +123,7 @@ internal sealed class Reach
     private void Add(Kind kind, Span span, Span outer)
     {
         var whole = span.Within(outer);
-        var withCopies = whole with { Before = whole.Before.And(CopyWindow), After = whole.After.And(CopyWindow) };
+        var withCopies = new Span(whole.Before.And(CopyWindow), whole.After.And(CopyWindow), whole.Back > TimeSpan.Zero ? whole.Back.And(CopyWindow) : default);
         _spans[kind] = _spans.TryGetValue(kind, out var known) ? known.Or(withCopies) : withCopies;
         if (span.Back > TimeSpan.Zero && !Events.All.Contains(kind))
         {
@@ -132,10 +134,13 @@ internal sealed class Reach
         }
     }
 
-    private static Span Of(Pairing pairing) => pairing switch
+    /// <summary>Where a setting in force is looked for: the last one, and its changes of the last hour.</summary>
+    public static Span InForce(TimeSpan settingMaxAge) => new(SettlingWindow, default, settingMaxAge);
+
+    private Span Of(Pairing pairing) => pairing switch
     {
         Pairing.AnchorItself => default,
-        Pairing.InForce => new(SettlingWindow, default, SettingWindow),
+        Pairing.InForce => InForce(_settingMaxAge),
         Pairing.SinceChange since => new(since.MaxAge, default, default),
         Pairing.Nearest nearest => new(nearest.Before, nearest.After, default),
         Pairing.SameSample => new(SampleWindow, SampleWindow, default),

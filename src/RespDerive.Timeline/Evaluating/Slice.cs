@@ -86,8 +86,8 @@ public sealed class Slice
     }
 
     /// <summary>
-    /// Drops each usable reading of which a preferred copy exists within a minute. The test looks at all neighbours, dropped or not,
-    /// so that it depends on one minute to each side only.
+    /// Drops each usable reading of which a preferred copy exists less than a minute away. The test looks at all neighbours, dropped or
+    /// not, so that it depends on one minute to each side only. A reading with equal ones on both sides is one of a series, not a copy.
     /// </summary>
     private static Reading[] WithoutCopies(IEnumerable<Reading> readings)
     {
@@ -96,7 +96,8 @@ public sealed class Slice
         var kept = new List<Reading>(sorted.Length);
         for (var i = 0; i < sorted.Length; i++)
         {
-            if (!HasPreferredCopy(sorted, i, -1) && !HasPreferredCopy(sorted, i, 1))
+            var (before, after) = (Repeats(sorted, i, -1), Repeats(sorted, i, 1));
+            if ((before.Apart && after.Apart) || !(before.Preferred || after.Preferred))
             {
                 kept.Add(sorted[i]);
             }
@@ -105,17 +106,19 @@ public sealed class Slice
         return [.. kept];
     }
 
-    private static bool HasPreferredCopy(Reading[] sorted, int i, int step)
+    /// <summary>Looks to one side: is there a repeat at another time, and is there a preferred one?</summary>
+    private static (bool Apart, bool Preferred) Repeats(Reading[] sorted, int i, int step)
     {
-        for (var j = i + step; j >= 0 && j < sorted.Length && (sorted[j].At - sorted[i].At).Duration() <= OneMinute; j += step)
+        var found = (Apart: false, Preferred: false);
+        for (var j = i + step; j >= 0 && j < sorted.Length && (sorted[j].At - sorted[i].At).Duration() < OneMinute; j += step)
         {
-            if (sorted[i].Usable && sorted[j].Usable && MayRepeat(sorted[i], sorted[j]) && Equal(sorted[i], sorted[j]) && Preferred(sorted[j], sorted[i]))
+            if (sorted[i].Usable && sorted[j].Usable && MayRepeat(sorted[i], sorted[j]) && Equal(sorted[i], sorted[j]))
             {
-                return true;
+                found = (found.Apart || sorted[j].At != sorted[i].At, found.Preferred || Preferred(sorted[j], sorted[i]));
             }
         }
 
-        return false;
+        return found;
     }
 
     /// <summary>Two resources can report one fact; one device reporting at two times reports two.</summary>

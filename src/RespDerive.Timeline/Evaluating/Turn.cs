@@ -26,7 +26,7 @@ public static class Turn
         var replaced = replacements.Select(replacement => replacement.Resource).ToHashSet();
         var before = replacements.SelectMany(replacement => history.ReadingsOf(replacement.Resource)).ToArray();
         var now = replacements.SelectMany(replacement => replacement.Readings).ToArray();
-        var personChanged = person is not null && person != history.Person;
+        var personChanged = person is not null && (person.Sex, person.BirthDate) != (history.Person?.Sex, history.Person?.BirthDate);
         var changed = Changed(before, now);
         var outcomes = new List<OutcomeChange>();
         var dirty = new List<(Definition Definition, Range Range)>();
@@ -50,7 +50,7 @@ public static class Turn
         {
             Replaced = [.. replaced.Order()],
             Readings = now,
-            Person = personChanged ? person : null,
+            Person = person != history.Person ? person : null,
             Outcomes = Settle(outcomes),
         };
     }

@@ -5,6 +5,7 @@ public static class OutcomeComparison
 {
     /// <summary>
     /// Same status class, value, unit, uncertainty, flags, root versions, definition revision and policy values used;
+    /// of the person the sex and age used, which are among the inputs, not the version: a new address revises nothing;
     /// neither the hash of the policy document nor the software version counts.
     /// </summary>
     public static bool Same(Outcome a, Outcome b) =>
@@ -25,7 +26,7 @@ public static class OutcomeComparison
         && a.Preliminary == b.Preliminary
         && a.InputCorrected == b.InputCorrected
         && a.Variant == b.Variant
-        && Equals(a.Person, b.Person)
+        && a.Person?.Resource == b.Person?.Resource
         && a.Flags.SequenceEqual(b.Flags, StringComparer.Ordinal)
         && Roots(a).SequenceEqual(Roots(b), SameInput);
 

@@ -10,27 +10,26 @@ internal static class Circumstances
 {
     private static readonly IReadOnlyList<Kind> Oxygen = [Kinds.FiO2Set, Kinds.FiO2];
     private static readonly IReadOnlyList<Kind> EndExpiratory = [Kinds.PeepSet, Kinds.Peep];
-    private static readonly Span Setting = new(Reach.SettlingWindow, default, Reach.SettingWindow);
-
     /// <summary>One circumstance: its value, the readings it rests on, and flags.</summary>
     public sealed record Finding(double Value, IReadOnlyList<Reading> Readings);
 
     /// <summary>Kinds, and windows around the anchor, that telling a circumstance needs.</summary>
-    public static IEnumerable<(Kind Kind, Span Span)> Reads(Kind circumstance)
+    public static IEnumerable<(Kind Kind, Span Span)> Reads(Kind circumstance, TimeSpan settingMaxAge)
     {
+        var setting = Reach.InForce(settingMaxAge);
         if (circumstance == Kinds.FiO2Changed)
         {
-            return Oxygen.Select(kind => (kind, Setting));
+            return Oxygen.Select(kind => (kind, setting));
         }
 
         if (circumstance == Kinds.PeepLowered || circumstance == Kinds.PeepRaised)
         {
-            return EndExpiratory.Select(kind => (kind, Setting));
+            return EndExpiratory.Select(kind => (kind, setting));
         }
 
         if (circumstance == Kinds.PatientEffort)
         {
-            return Effort.Reads;
+            return Effort.Reads(settingMaxAge);
         }
 
         if (circumstance == Kinds.PaCO2)
@@ -48,31 +47,30 @@ internal static class Circumstances
             return [(circumstance, new Span(TimeSpan.FromHours(6), default, default))];
         }
 
-        return circumstance.IsCoded && circumstance.Origin == Origin.Circumstance ? [(circumstance, Setting)] : [];
+        return circumstance.IsCoded && circumstance.Origin == Origin.Circumstance ? [(circumstance, setting)] : [];
     }
 
     /// <summary>Tells a circumstance at an anchor; null when the timeline does not say.</summary>
     public static Finding? Tell(Kind circumstance, Reading anchor, Slice slice, Policy policy)
     {
-        var maxAge = policy.TimingOf(anchor.Id.Resource.Source).SettingMaxAge;
         if (circumstance == Kinds.FiO2Changed)
         {
-            return Since(SettingChanges.LastStep(Oxygen, SettingChanges.OxygenStep, anchor.At, slice, maxAge), anchor, _ => true);
+            return Since(SettingChanges.LastStep(Oxygen, step => SettingChanges.IsStep(step, SettingChanges.OxygenStep), anchor.At, slice, policy), anchor);
         }
 
         if (circumstance == Kinds.PeepLowered)
         {
-            return Since(SettingChanges.LastStep(EndExpiratory, SettingChanges.PeepStep, anchor.At, slice, maxAge), anchor, step => step < 0);
+            return Since(SettingChanges.LastStep(EndExpiratory, step => step < 0 && SettingChanges.IsStep(step, SettingChanges.PeepStep), anchor.At, slice, policy), anchor);
         }
 
         if (circumstance == Kinds.PeepRaised)
         {
-            return Since(SettingChanges.LastStep(EndExpiratory, SettingChanges.PeepStep, anchor.At, slice, maxAge), anchor, step => step > 0);
+            return Since(SettingChanges.LastStep(EndExpiratory, step => step > 0 && SettingChanges.IsStep(step, SettingChanges.PeepStep), anchor.At, slice, policy), anchor);
         }
 
         if (circumstance == Kinds.PatientEffort)
         {
-            return Effort.Tell(anchor, slice, maxAge);
+            return Effort.Tell(anchor, slice, policy);
         }
 
         var choice = circumstance == Kinds.PaCO2 ? PairingRules.Choose(new Pairing.SameSample(), [circumstance], anchor, slice, policy)
@@ -85,8 +83,8 @@ internal static class Circumstances
     /// <summary>True when the setting in force is so recent that an earlier change cannot be excluded, and nothing earlier is known.</summary>
     public static bool SettlingUnknown(Kind circumstance, Reading anchor, Slice slice, Policy policy) =>
         circumstance == Kinds.FiO2Changed
-        && SettingChanges.LastStep(Oxygen, SettingChanges.OxygenStep, anchor.At, slice, policy.TimingOf(anchor.Id.Resource.Source).SettingMaxAge) is { EarlierKnown: false };
+        && SettingChanges.LastStep(Oxygen, step => SettingChanges.IsStep(step, SettingChanges.OxygenStep), anchor.At, slice, policy) is { EarlierKnown: false };
 
-    private static Finding? Since(SettingChanges.Change change, Reading anchor, Func<double, bool> wanted) =>
-        change.At is { } at && wanted(change.By) ? new Finding((anchor.At - at).TotalMinutes, change.Readings) : null;
+    private static Finding? Since(SettingChanges.Change change, Reading anchor) =>
+        change.At is { } at ? new Finding((anchor.At - at).TotalMinutes, change.Readings) : null;
 }

@@ -11,17 +11,22 @@ internal static class Effort
     private const double No = 0;
     private const double Yes = 1;
     private static readonly Span Near = new(Reach.EffortWindow, Reach.EffortWindow, default);
-    private static readonly Span Setting = new(Reach.SettlingWindow, Reach.EffortWindow, Reach.SettingWindow);
     private static readonly double Spontaneous = Kinds.Mode.Codes.ToList().IndexOf("spontaneous");
 
-    public static IEnumerable<(Kind Kind, Span Span)> Reads =>
-    [
-        (Kinds.RateSpontaneous, Near), (Kinds.RateTotal, Near),
-        (Kinds.RateSet, Setting), (Kinds.Mode, Setting), (Kinds.PressureSupportSet, Setting),
-    ];
+    /// <summary>What is looked at; the set rate is that in force at each reading of the total rate.</summary>
+    public static IEnumerable<(Kind Kind, Span Span)> Reads(TimeSpan settingMaxAge)
+    {
+        var inForce = Reach.InForce(settingMaxAge);
+        return
+        [
+            (Kinds.RateSpontaneous, Near), (Kinds.RateTotal, Near),
+            (Kinds.RateSet, new Span(inForce.Before, Reach.EffortWindow, inForce.Back + Reach.EffortWindow)),
+            (Kinds.Mode, inForce), (Kinds.PressureSupportSet, inForce),
+        ];
+    }
 
     /// <summary>Effort, no effort, or null when there is no evidence either way.</summary>
-    public static Circumstances.Finding? Tell(Reading anchor, Slice slice, TimeSpan maxAge)
+    public static Circumstances.Finding? Tell(Reading anchor, Slice slice, Policy policy)
     {
         var from = anchor.At.Minus(Reach.EffortWindow);
         var to = anchor.At.Plus(Reach.EffortWindow);
@@ -38,7 +43,7 @@ internal static class Effort
 
         foreach (var total in slice.Between(Kinds.RateTotal, from, to))
         {
-            if (total.Usable && slice.Last([Kinds.RateSet], total.At, maxAge) is { Usable: true } set)
+            if (total.Usable && InForceReadings.At([Kinds.RateSet], total.At, slice, policy) is { Usable: true } set)
             {
                 if (total.Value >= set.Value + Triggered)
                 {
@@ -49,13 +54,13 @@ internal static class Effort
             }
         }
 
-        if (slice.Last([Kinds.Mode], anchor.At, maxAge) is { Usable: true } mode && mode.Value.Equals(Spontaneous))
+        if (InForceReadings.At([Kinds.Mode], anchor.At, slice, policy) is { Usable: true } mode && mode.Value.Equals(Spontaneous))
         {
             return new(Yes, [mode]);
         }
 
-        if (slice.Last([Kinds.PressureSupportSet], anchor.At, maxAge) is { Usable: true, Value: > 0 } support
-            && slice.Last([Kinds.RateSet], anchor.At, maxAge) is not { Usable: true, Value: > 0 })
+        if (InForceReadings.At([Kinds.PressureSupportSet], anchor.At, slice, policy) is { Usable: true, Value: > 0 } support
+            && InForceReadings.At([Kinds.RateSet], anchor.At, slice, policy) is not { Usable: true, Value: > 0 })
         {
             return new(Yes, [support]);
         }

@@ -17,7 +17,8 @@ internal static class PairingRules
         Pairing.AnchorItself => kinds.Contains(anchor.Kind) ? Choice.Of(anchor) : Choice.Nothing,
         Pairing.InForce => InForce(kinds, anchor, slice, policy),
         Pairing.SinceChange since => SinceChange(since, kinds, anchor, slice, policy),
-        Pairing.Nearest nearest => Choice.Of(Nearest(Within(kinds, anchor.At.Minus(nearest.Before), anchor.At.Plus(nearest.After), slice), anchor.At)),
+        Pairing.Nearest nearest => Choice.Of(Nearest([.. Within(kinds, anchor.At.Minus(nearest.Before), anchor.At.Plus(nearest.After), slice)
+            .Where(reading => !Calls.IsOutranked(reading, kinds, slice))], anchor.At)),
         Pairing.SameSample => Choice.Of(SameSample(kinds, anchor, slice)),
         Pairing.SameManoeuvre same => Choice.Of(SameManoeuvre(same, kinds, anchor, slice)),
         Pairing.MedianOver median => MedianOver(median, kinds, anchor, slice),
@@ -25,11 +26,11 @@ internal static class PairingRules
         _ => Choice.Nothing,
     };
 
-    /// <summary>The last setting at or before the anchor, unless it is too old or an event ended it.</summary>
+    /// <summary>The last setting at or before the anchor that is in force.</summary>
     private static Choice InForce(IReadOnlyList<Kind> kinds, Reading anchor, Slice slice, Policy policy)
     {
-        var setting = slice.Last(kinds, anchor.At, policy.TimingOf(anchor.Id.Resource.Source).SettingMaxAge);
-        if (setting is null || Ended(setting, anchor.At, slice))
+        var setting = InForceReadings.At(kinds, anchor.At, slice, policy);
+        if (setting is null)
         {
             return Choice.Nothing;
         }
@@ -47,7 +48,7 @@ internal static class PairingRules
             return Choice.Nothing;
         }
 
-        var change = SettingChanges.LastStep(rule.ChangeOf, SettingChanges.OxygenStep, anchor.At, slice, policy.TimingOf(anchor.Id.Resource.Source).SettingMaxAge);
+        var change = SettingChanges.LastStep(rule.ChangeOf, step => SettingChanges.IsStep(step, SettingChanges.OxygenStep), anchor.At, slice, policy);
         if (change.At is { } at && at > measured.At)
         {
             return Choice.Nothing;
@@ -55,19 +56,6 @@ internal static class PairingRules
 
         return Disagreeing(measured, kinds, slice, anchor.At) is { } other ? Choice.Block(Withheld.ConflictingInputs, measured, other) : Choice.Of(measured);
     }
-
-    private static bool Ended(Reading setting, DateTimeOffset at, Slice slice) => Events.All.Any(kind =>
-    {
-        foreach (var end in slice.Between(kind, setting.At.Plus(TimeSpan.FromTicks(1)), at))
-        {
-            if (kind == Events.SupportEnd || setting.Encounter is null || setting.Encounter == end.Encounter)
-            {
-                return true;
-            }
-        }
-
-        return false;
-    });
 
     /// <summary>For oxygen fractions: a reading of equal rank within a minute, at or before the anchor, that differs by more than 0.05.</summary>
     private static Reading? Disagreeing(Reading chosen, IReadOnlyList<Kind> kinds, Slice slice, DateTimeOffset at)
@@ -107,12 +95,13 @@ internal static class PairingRules
             ?? Nearest([.. near.Where(reading => (reading.At - anchor.At).Duration() <= rule.Within)], anchor.At);
     }
 
-    /// <summary>Refused readings are left out of a median; they block only when too few usable ones remain.</summary>
+    /// <summary>The median of all readings in the window; a refused one among them blocks, as everywhere.</summary>
     private static Choice MedianOver(Pairing.MedianOver rule, IReadOnlyList<Kind> kinds, Reading anchor, Slice slice)
     {
         var near = Within(kinds, anchor.At.Minus(rule.Before), anchor.At.Plus(rule.After), slice);
-        var usable = near.Where(reading => reading.Usable).ToArray();
-        return usable.Length >= Math.Max(1, rule.AtLeast) ? Choice.Median(usable) : Choice.Of(near.FirstOrDefault(reading => !reading.Usable));
+        return near.FirstOrDefault(reading => !reading.Usable) is { } refused ? Choice.Of(refused)
+            : near.Length >= Math.Max(1, rule.AtLeast) ? Choice.Median(near)
+            : Choice.Nothing;
     }
 
     private static Reading? Standing(IReadOnlyList<Kind> kinds, Reading anchor, Slice slice)

@@ -15,14 +15,16 @@ internal static class SettingChanges
     private const double Slack = 1e-9;
 
     /// <summary>What is known of the last change.</summary>
-    /// <param name="At">Time of the last step; null when none was seen.</param>
-    /// <param name="By">Signed size of the step.</param>
+    /// <param name="At">Time of the last wanted step; null when none was seen.</param>
     /// <param name="EarlierKnown">True when more than one value is known, or the only one is old enough to have settled.</param>
     /// <param name="Readings">The two readings around the step.</param>
-    public sealed record Change(DateTimeOffset? At, double By, bool EarlierKnown, IReadOnlyList<Reading> Readings);
+    public sealed record Change(DateTimeOffset? At, bool EarlierKnown, IReadOnlyList<Reading> Readings);
 
-    /// <summary>The last step at or before an anchor, of settings or unspecified values of the kinds, streamed measurements left out.</summary>
-    public static Change LastStep(IReadOnlyList<Kind> kinds, double least, DateTimeOffset at, Slice slice, TimeSpan maxAge)
+    /// <summary>True when a step is as large as the least one, whatever its sign.</summary>
+    public static bool IsStep(double step, double least) => Math.Abs(step) >= least - Slack;
+
+    /// <summary>The last wanted step at or before an anchor, of settings or unspecified values of the kinds, streamed measurements left out.</summary>
+    public static Change LastStep(IReadOnlyList<Kind> kinds, Func<double, bool> wanted, DateTimeOffset at, Slice slice, Policy policy)
     {
         var values = new List<Reading>();
         foreach (var kind in kinds)
@@ -32,7 +34,7 @@ internal static class SettingChanges
                 values.Add(reading);
             }
 
-            if (slice.Last([kind], at.Minus(Reach.SettlingWindow).Minus(TimeSpan.FromTicks(1)), maxAge) is { } before)
+            if (InForceReadings.LastBefore(kind, at, slice, policy) is { } before)
             {
                 values.Add(before);
             }
@@ -42,14 +44,13 @@ internal static class SettingChanges
         values.Sort(Slice.Order);
         for (var i = values.Count - 1; i > 0; i--)
         {
-            var step = values[i].Value - values[i - 1].Value;
-            if (Math.Abs(step) >= least - Slack)
+            if (wanted(values[i].Value - values[i - 1].Value))
             {
-                return new Change(values[i].At, step, true, [values[i - 1], values[i]]);
+                return new Change(values[i].At, true, [values[i - 1], values[i]]);
             }
         }
 
         var settled = values.Count == 1 && at - values[0].At >= Reach.SettlingWindow;
-        return new Change(null, 0, values.Count > 1 || settled, values.Count > 0 ? [values[^1]] : []);
+        return new Change(null, values.Count > 1 || settled, values.Count > 0 ? [values[^1]] : []);
     }
 }

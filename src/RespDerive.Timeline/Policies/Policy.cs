@@ -63,6 +63,9 @@ public sealed class PolicyBook
     /// <summary>All policies, oldest first.</summary>
     public IReadOnlyList<Policy> All => _policies;
 
+    /// <summary>Longest time a setting stays in force under any of the policies.</summary>
+    public TimeSpan LongestSetting => _policies.SelectMany(policy => policy.Sources.Values).Append(new SourceTiming()).Max(timing => timing.SettingMaxAge);
+
     /// <summary>The policy in force at an event time; before the first one, the first.</summary>
     public Policy At(DateTimeOffset time) => _policies.LastOrDefault(policy => (policy.ValidFrom ?? DateTimeOffset.MinValue) <= time) ?? _policies[0];
 }

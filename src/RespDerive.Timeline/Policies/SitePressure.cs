@@ -6,7 +6,7 @@ namespace RespDerive.Timeline;
 /// <summary>Barometric pressure at an anchor: from the policy, or a plausible reading; never assumed.</summary>
 /// <param name="Value">mm[Hg].</param>
 /// <param name="Tolerance">Tolerance when it is not the kind's own.</param>
-/// <param name="Reading">The reading it is from; null when from the policy.</param>
+/// <param name="Reading">The reading it is from, or that blocks; null when from the policy.</param>
 internal sealed record SitePressure(double Value, Tolerance? Tolerance, Reading? Reading)
 {
     private static readonly TimeSpan MaxAge = TimeSpan.FromHours(6);
@@ -28,7 +28,7 @@ internal sealed record SitePressure(double Value, Tolerance? Tolerance, Reading?
         Reading? latest = null;
         foreach (var reading in slice.Between(Kinds.BarometricPressure, anchor.At.Minus(MaxAge), anchor.At))
         {
-            if (reading.Usable && (standard is not { } expected || Math.Abs(reading.Value - expected) <= Plausible * expected))
+            if (!reading.Usable || standard is not { } expected || Math.Abs(reading.Value - expected) <= Plausible * expected)
             {
                 latest = reading;
             }

@@ -31,7 +31,7 @@ internal static partial class ComputeRequest
         var number = Number().Match(value);
         if (!number.Success)
         {
-            return new Given(name, null, null, value);
+            return new Given(name, null, null, value == "null" ? "missing" : value);
         }
 
         return decimal.TryParse(number.ValueSpan, Style, CultureInfo.InvariantCulture, out var parsed)

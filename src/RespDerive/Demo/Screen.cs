@@ -27,6 +27,7 @@ internal sealed class Screen(TextWriter writer)
     {
         Line("RespDerive demo: an invented ward with invented patients, faster than real time. Derived numbers are arithmetic on charted");
         Line("inputs; they are no diagnosis, no alarm and no order.");
+        Line("in: charted · =: derived (± one standard uncertainty) · rev: revised · back: retracted · held: withheld, and why");
         Line($"FHIR endpoint {sandbox} · service {service} · store in {folder}");
         Line("");
         Line("time   patient          what");
@@ -88,7 +89,7 @@ internal sealed class Screen(TextWriter writer)
         if (change.Now is { Withheld: null } now)
         {
             var flags = now.Flags.Count > 0 ? $"  [{string.Join(", ", now.Flags)}]" : "";
-            Row(outcome.At, outcome.Patient, (before is null ? "=     " : "rev   ") + $"{Name(outcome)} {Value(now)}{(before is null ? "" : $", was {before}")}{flags}");
+            Row(outcome.At, outcome.Patient, before is null ? $"=     {Name(outcome)} {Value(now)}{flags}" : $"rev   {Name(outcome)} {Value(now)}, {Why(now, before)}{flags}");
         }
         else if (before is not null)
         {
@@ -106,6 +107,9 @@ internal sealed class Screen(TextWriter writer)
 
     private void Row(DateTimeOffset at, string patient, string text) =>
         writer.WriteLine(string.Create(CultureInfo.InvariantCulture, $"{at:HH:mm}  {_names.GetValueOrDefault(patient, patient),-16} {text}"));
+
+    private static string Why(Outcome now, string before) =>
+        Value(now) == before ? "same number on other evidence" : $"was {before}{(now.InputCorrected ? " (an input was corrected)" : "")}";
 
     private static string Name(Outcome outcome) => outcome.Definition;
 
