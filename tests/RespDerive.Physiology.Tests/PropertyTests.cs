@@ -17,7 +17,7 @@ public sealed class PropertyTests
             (plausible, present, draws) =>
             {
                 // Half of the draws hold nothing but plausible values, so that definitions with many inputs get to publish at all.
-                var roots = new Roots(kinds.Select((kind, i) => new Root(kind, Draw(kind, plausible ? (11, draws[i].Item2) : draws[i]))).Where((_, i) => present[i]));
+                var roots = new Roots(kinds.Select((kind, i) => new Root(kind, Draw(kind, plausible ? (11, draws[i].Item2) : draws[i]))).Where((_, i) => present[i] || kinds[i].Assumed is not null));
                 var computed = Computation.Of(definition, roots);
                 if (computed.Withheld is not null)
                 {
@@ -41,6 +41,12 @@ public sealed class PropertyTests
         if (kind.IsCoded)
         {
             return draw.Sort == 0 ? double.NaN : draw.Sort == 1 ? kind.Codes.Count : Math.Floor(draw.At * kind.Codes.Count * 0.999);
+        }
+
+        // A constant is there even when nobody gives it, mostly with its assumed value.
+        if (kind.Assumed is { } assumed && draw.Sort > 5)
+        {
+            return assumed;
         }
 
         var greatest = Math.Min(kind.Greatest, 1e6);

@@ -26,6 +26,7 @@ public static class Flags
     public const string BandUncertain = "band-uncertain";
     public const string ModeUnconfirmed = "mode-unconfirmed";
     public const string OnPressureSupport = "on-pressure-support";
+    public const string CorrectionUnstated = "correction-unstated";
 #pragma warning restore CS1591
 
     private static readonly Dictionary<string, string> Lines = new(StringComparer.Ordinal)
@@ -44,6 +45,7 @@ public static class Flags
         [Spo2Above97] = "SpO2 above 97 %: the ratio says little about oxygenation.",
         [OrderUnknown] = "The source gave neither version nor time of change; arrival order decided.",
         [SpecimenUnread] = "The specimen named by the source could not be read.",
+        [CorrectionUnstated] = "Nothing says whether the analyser already corrected the gas to the patient's temperature; it must not be corrected twice.",
         [OtherDevice] = "The inputs come from different devices.",
         [DyshemoglobinUnknown] = "Carboxy- and methaemoglobin were not measured and are taken as none.",
         [VenousTensionAssumed] = "The mixed venous oxygen tension was not measured; its small part of the content is assumed.",

@@ -38,6 +38,11 @@ public static class Withheld
     public const string NotOnRoomAir = "not-on-room-air";
     public const string NotOnHighFlow = "not-on-high-flow";
     public const string NotSpontaneous = "not-spontaneous";
+    public const string ExpiredExceedsArterial = "expired-exceeds-arterial";
+    public const string AlreadyCorrected = "already-temperature-corrected";
+    public const string TemperatureOutOfRange = "temperature-out-of-range";
+    public const string ConstantsMixed = "constants-mixed";
+    public const string RateAboveCeiling = "rate-above-ceiling";
     public const string PressureUnknown = "pressure-unknown";
     public const string ConflictingInputs = "conflicting-inputs";
     public const string TimeUncertain = "time-uncertain";
@@ -84,6 +89,11 @@ public static class Withheld
         (NotOnRoomAir, "The prediction holds on room air only."),
         (NotOnHighFlow, "The value is defined only for high-flow nasal oxygen."),
         (NotSpontaneous, "The value is defined only for spontaneous breaths."),
+        (ExpiredExceedsArterial, "Expired carbon dioxide is not below arterial: not simultaneous, or not what it is called."),
+        (AlreadyCorrected, "The blood gas is already corrected to the patient's temperature; it is never corrected twice."),
+        (TemperatureOutOfRange, "The temperature is outside the range the correction holds for (25 to 42 °C)."),
+        (ConstantsMixed, "Constants of different published sets are combined."),
+        (RateAboveCeiling, "The rate would be above 35 /min, the ceiling of the ARDS Network protocol."),
         (PressureUnknown, "The barometric pressure is not known; it is never assumed."),
         (ConflictingInputs, "Two inputs of equal rank disagree."),
         (TimeUncertain, "The time of the anchor is not known to the minute."),

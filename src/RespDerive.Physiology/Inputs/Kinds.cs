@@ -15,6 +15,8 @@ public static class Kinds
     private static readonly Tolerance CoOximeter = Tolerance.Limit(1.5, 0, "CO-oximeter ±1 to 2 % (from memory)");
     private static readonly Tolerance Rate = Tolerance.Limit(1, 0, Judgement + ": displayed integer");
 
+    private static readonly Tolerance ExpiredCarbonDioxide = Tolerance.Limit(3.1, 0.08, "ISO 80601-2-55 ±(0.43 vol% + 8 %), from memory");
+
     // blood gas
     public static readonly Kind PaO2 = Kind.Quantity("pao2", "PaO2", "arterial oxygen partial pressure", Laboratory, "mm[Hg]", 10, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
     public static readonly Kind Po2 = Kind.Quantity("po2-unspecified", "PO2", "oxygen partial pressure, site of sample unspecified", Laboratory, "mm[Hg]", 0.5, 750, Tolerance.Deviation(0, 0.05, GasAnalyser));
@@ -101,6 +103,7 @@ public static class Kinds
     // patient, site
     public static readonly Kind Height = Kind.Quantity("height", "height", "body height", Demographic, "cm", 140, 210, Tolerance.Limit(1, 0, "measured height, own judgement"), Withheld.HeightOutOfRange);
     public static readonly Kind Sex = Kind.Coded("sex", "sex", "sex used by the formula", Demographic, "female", "male", "unknown");
+    public static readonly Kind Weight = Kind.Quantity("weight", "weight", "body weight", Demographic, "kg", 20, 400, Tolerance.Limit(2, 0, Judgement));
     public static readonly Kind Age = Kind.Quantity("age", "age", "age", Demographic, "a", 0, 125, Tolerance.None);
     public static readonly Kind BarometricPressure = Kind.Quantity("barometric-pressure", "PB", "barometric pressure", Constant, "mm[Hg]", 240, 800, Tolerance.Limit(0.75, 0, "barometer ±1 hPa, own judgement"));
     public static readonly Kind WaterVapour = Kind.Quantity("water-vapour-pressure", "PH2O", "water vapour pressure in the airways", Constant, "mm[Hg]", 40, 55, Tolerance.None, assumed: 47);
@@ -112,6 +115,39 @@ public static class Kinds
     public static readonly Kind OxygenationCriteria = Kind.Coded("oxygenation-criteria", "criteria", "set of criteria", Constant, "berlin-2012", "global-2023", "global-2023-limited-resources");
     public static readonly Kind SupportNotStated = Kind.Taken("respiratory-support-not-stated", "support_not_stated", "respiratory support, not stated", Constant, "not stated");
     public static readonly Kind HighFlowTaken = Kind.Taken("respiratory-support-taken", "support_taken", "respiratory support, taken on trust", Constant, "high-flow oxygen");
+    // carbon dioxide
+    public static readonly Kind MixedExpiredCO2 = Kind.Quantity("mixed-expired-co2", "PECO2", "mixed expired carbon dioxide partial pressure", Measurement, "mm[Hg]", 2, 100, ExpiredCarbonDioxide);
+    public static readonly Kind EndTidalCO2 = Kind.Quantity("etco2", "PetCO2", "end-tidal carbon dioxide partial pressure", Measurement, "mm[Hg]", 2, 150, ExpiredCarbonDioxide);
+    public static readonly Kind MeanAlveolarCO2 = Kind.Quantity("mean-alveolar-pco2", "PACO2_mean", "mean alveolar carbon dioxide partial pressure of volumetric capnography", Measurement, "mm[Hg]", 5, 150, ExpiredCarbonDioxide);
+    public static readonly Kind CO2Production = Kind.Quantity("vco2", "VCO2", "carbon dioxide production (STPD)", Measurement, "mL/min", 20, 1500, Tolerance.Limit(0, 0.1, Judgement));
+    public static readonly Kind PaCO2Target = Kind.Quantity("paco2-target", "PaCO2target", "arterial carbon dioxide partial pressure aimed at", Constant, "mm[Hg]", 20, 120, Tolerance.None);
+
+    // acid and base, temperature
+    public static readonly Kind BicarbonateReported = Kind.Quantity("hco3-arterial", "HCO3lab", "bicarbonate of arterial blood as the analyser reports it", Laboratory, "mmol/L", 1, 80, Tolerance.Limit(1, 0, Judgement));
+    public static readonly Kind BaseExcessReported = Kind.Quantity("base-excess-arterial", "BElab", "base excess of arterial blood as the analyser reports it", Laboratory, "mmol/L", -40, 40, Tolerance.Limit(1, 0, Judgement));
+    public static readonly Kind BodyTemperature = Kind.Quantity("body-temperature", "temp", "body temperature", Measurement, "Cel", 10, 45, Tolerance.Limit(0.2, 0, Judgement));
+    public static readonly Kind HemoglobinMolar = Kind.Quantity("hemoglobin-molar", "ctHb", "haemoglobin, molar (monomer)", Laboratory, "mmol/L", 1.2, 16, Tolerance.Limit(0, 0.04, "CLIA 2025 ±4 % (from memory)"));
+
+    // lung function laboratory
+    public static readonly Kind Dlco = Kind.Quantity("dlco", "DLCO", "diffusing capacity for carbon monoxide, single breath", Measurement, "mL/min/mm[Hg]", 1, 80, Tolerance.Deviation(1, 0, "2 mL/min/mm[Hg] between tests, from memory"));
+    public static readonly Kind AlveolarVolume = Kind.Quantity("alveolar-volume", "VAeff", "alveolar volume of the single breath (BTPS)", Measurement, "L", 0.5, 12, Tolerance.Limit(0, 0.05, Judgement));
+    public static readonly Kind MembraneConductanceNO = Kind.Quantity("membrane-conductance-no", "DM_NO", "membrane conductance for nitric oxide", Measurement, "mL/min/mm[Hg]", 10, 800, Tolerance.Limit(0, 0.15, Judgement));
+    public static readonly Kind InverseThetaVc = Kind.Quantity("inverse-theta-capillary-volume", "inv_thetaVc", "resistance of the blood to carbon monoxide uptake, 1/(θ·Vc)", Measurement, "min.mm[Hg]/mL", 0.002, 0.2, Tolerance.Limit(0, 0.3, Judgement + ": from two oxygen levels or two gases"));
+    public static readonly Kind BreathHoldPo2 = Kind.Quantity("alveolar-po2-breath-hold", "PAO2bh", "alveolar oxygen partial pressure during the breath-hold", Measurement, "mm[Hg]", 40, 700, Tolerance.Limit(10, 0, Judgement));
+    public static readonly Kind DlcoGroup = Kind.Coded("dlco-hb-group", "group", "group whose haemoglobin adjustment holds", Demographic, "male >= 15 y", "female or < 15 y");
+
+    // constants of definitions; those of one published set belong together
+    public static readonly Kind CO2Conversion = Kind.Quantity("co2-conversion-factor", "factor", "tension of 1 mL/min (STPD) of carbon dioxide in 1 L/min (BTPS)", Constant, "mm[Hg].L/mL", 0.86, 0.8635, Tolerance.None, assumed: 0.863);
+    public static readonly Kind CO2Solubility = Kind.Quantity("co2-solubility", "alphaCO2", "solubility of carbon dioxide in plasma", Constant, "mmol/L/mm[Hg]", 0.0303, 0.0308, Tolerance.None, assumed: 0.0307);
+    public static readonly Kind CO2Pk = Kind.Quantity("carbonic-acid-pk", "pK", "apparent pK of carbonic acid in plasma", Constant, "[pH]", 6.095, 6.11, Tolerance.None, assumed: 6.105);
+    public static readonly Kind CO2SolubilityZander = Fixed("co2-solubility-zander", "alphaZ", "solubility of carbon dioxide in plasma, Zander's set", "mmol/L/mm[Hg]", 0.0304);
+    public static readonly Kind CO2PkZander = Fixed("carbonic-acid-pk-zander", "pKZ", "apparent pK of carbonic acid, Zander's set", "[pH]", 6.1);
+    public static readonly Kind CO2SolubilitySiggaardAndersen = Fixed("co2-solubility-siggaard-andersen", "alphaS", "solubility of carbon dioxide in plasma, Siggaard-Andersen's set", "mmol/L/kPa", 0.230);
+    public static readonly Kind CO2PkSiggaardAndersen = Fixed("carbonic-acid-pk-siggaard-andersen", "pKS", "apparent pK of carbonic acid, Siggaard-Andersen's set", "[pH]", 6.1);
+    public static readonly Kind ThetaSlope = Kind.Quantity("theta-slope", "slope", "rise of 1/θ with oxygen tension", Constant, "1", 0.004, 0.0066, Tolerance.None, assumed: 0.0062);
+    public static readonly Kind ThetaIntercept = Kind.Quantity("theta-intercept", "intercept", "1/θ without oxygen", Constant, "1", 0.99, 1.31, Tolerance.None, assumed: 1.16);
+    public static readonly Kind DiffusivityRatio = Kind.Quantity("diffusivity-ratio-no-co", "alpha_NO_CO", "diffusivity of nitric oxide over that of carbon monoxide", Constant, "1", 1.9, 2.45, Tolerance.None, assumed: 1.97);
+    public static readonly Kind EnergyFactor = Kind.Quantity("energy-expenditure-factor", "kREE", "true over predicted energy expenditure", Constant, "1", 0.4, 2.5, Tolerance.Deviation(0, 0.2, "predictive equations in intensive care, Ann Intensive Care 2016, doi:10.1186/s13613-016-0118-8"), assumed: 1);
 
     // circumstances that only gates look at
     public static readonly Kind Sample = Kind.Coded("sample", "sample", "site of the blood sample", Circumstance, "arterial", "venous", "central venous", "mixed venous", "capillary", "unknown");
@@ -120,6 +156,8 @@ public static class Kinds
     public static readonly Kind Support = Kind.Coded("respiratory-support", "support", "kind of respiratory support", Circumstance, "invasive ventilation", "non-invasive ventilation", "high-flow oxygen", "low-flow oxygen", "none");
     public static readonly Kind Waveform = Kind.Coded("flow-waveform", "waveform", "inspiratory flow waveform", Circumstance, "constant", "decelerating", "other");
     public static readonly Kind Ecls = Kind.Coded("extracorporeal-support", "ecls", "extracorporeal gas exchange", Circumstance, "false", "true");
+    public static readonly Kind TemperatureCorrected = Kind.Coded("gas-temperature-corrected", "corrected", "whether the gas is already corrected to the patient's temperature", Circumstance, "false", "true");
+    public static readonly Kind DlcoGrade = Kind.Coded("dlco-test-grade", "grade", "quality grade of the diffusing capacity manoeuvre", Circumstance, "acceptable", "unacceptable");
     public static readonly Kind FiO2Changed = Kind.Quantity("fio2-changed-before-draw", "FiO2_changed_before_draw", "time since FiO2 was changed", Circumstance, "min", 0, double.MaxValue, Tolerance.None);
     public static readonly Kind PeepLowered = Kind.Quantity("peep-lowered-before-draw", "PEEP_lowered_before_draw", "time since PEEP was lowered", Circumstance, "min", 0, double.MaxValue, Tolerance.None);
     public static readonly Kind PeepRaised = Kind.Quantity("peep-raised-before-draw", "PEEP_raised_before_draw", "time since PEEP was raised", Circumstance, "min", 0, double.MaxValue, Tolerance.None);
@@ -135,6 +173,10 @@ public static class Kinds
     /// <summary>A root of value zero that carries the error of a dissociation curve into the uncertainty.</summary>
     private static Kind Misfit(string key, string symbol, string curve, double limit, string source) =>
         Kind.Quantity(key, symbol, $"misfit of the {curve} curve", Constant, "%", -3, 3, Tolerance.Limit(limit, 0, source), assumed: 0);
+
+    /// <summary>A constant of a published set: part of a definition, never chosen.</summary>
+    private static Kind Fixed(string key, string symbol, string name, string unit, double value) =>
+        Kind.Quantity(key, symbol, name, Constant, unit, value * (1 - 1e-9), value * (1 + 1e-9), Tolerance.None, assumed: value);
 
     private static readonly Dictionary<string, Kind> ByKey = All.ToDictionary(kind => kind.Key, StringComparer.Ordinal);
 }
