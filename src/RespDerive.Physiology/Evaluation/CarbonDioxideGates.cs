@@ -32,7 +32,7 @@ public static class CarbonDioxideGates
 
     /// <summary>Constants of one set belong together.</summary>
     public static readonly Gate OneBicarbonateSet = new(Withheld.ConstantsMixed, "solubility and pK' are not of one published set", [],
-        x => x.Has(Kinds.CO2Solubility) && x.Has(Kinds.CO2Pk) && !BicarbonateSets.Any(set => IsSet(x, set)));
+        x => x.Has(Kinds.CO2Solubility) && x.Has(Kinds.CO2Pk) && !IsAnySet(x));
 
     /// <summary>The CLSI base excess is defined on the CLSI bicarbonate.</summary>
     public static readonly Gate ClsiBicarbonate = new(Withheld.ConstantsMixed, "solubility and pK' are not those of the CLSI set", [],
@@ -40,8 +40,29 @@ public static class CarbonDioxideGates
 
     /// <summary>Slope and intercept of one publication belong together.</summary>
     public static readonly Gate OneThetaSet = new(Withheld.ConstantsMixed, "slope and intercept of 1/θ are not of one published set", [],
-        x => x.Has(Kinds.ThetaSlope) && x.Has(Kinds.ThetaIntercept)
-            && !ThetaSets.Any(set => Math.Abs(x[Kinds.ThetaSlope] - set.Slope) < 1e-4 && Math.Abs(x[Kinds.ThetaIntercept] - set.Intercept) < 0.01));
+        x => x.Has(Kinds.ThetaSlope) && x.Has(Kinds.ThetaIntercept) && !IsAnyTheta(x));
+
+    private static bool IsAnySet(Roots x)
+    {
+        var found = false;
+        foreach (var set in BicarbonateSets)
+        {
+            found |= IsSet(x, set);
+        }
+
+        return found;
+    }
+
+    private static bool IsAnyTheta(Roots x)
+    {
+        var found = false;
+        foreach (var (slope, intercept) in ThetaSets)
+        {
+            found |= Math.Abs(x[Kinds.ThetaSlope] - slope) < 1e-4 && Math.Abs(x[Kinds.ThetaIntercept] - intercept) < 0.01;
+        }
+
+        return found;
+    }
 
     private static bool IsSet(Roots x, (double Alpha, double Pk) set) =>
         Math.Abs(x[Kinds.CO2Solubility] - set.Alpha) < 2.5e-5 && Math.Abs(x[Kinds.CO2Pk] - set.Pk) < 0.002;

@@ -31,6 +31,24 @@ public static class VentilatorGates
         x => x.Has(Kinds.Peak) && x.Has(Kinds.Plateau) && x[Kinds.Peak] < x[Kinds.Plateau]);
 
     /// <summary>A drop between two pressures is one only when one transducer measured both; without a device they are taken to be of one.</summary>
-    public static readonly Gate PressuresOfOneDevice = new(Withheld.InputMissing, "there is no peak pressure of the device that measured the plateau", [],
-        x => x.All.Where(root => root.Kind == Kinds.Peak || root.Kind == Kinds.Plateau).Select(root => root.Transducer).OfType<string>().Distinct(StringComparer.Ordinal).Count() > 1);
+    public static readonly Gate PressuresOfOneDevice = new(Withheld.InputMissing, "there is no peak pressure of the device that measured the plateau", [], OfTwoDevices);
+
+    private static bool OfTwoDevices(Roots x)
+    {
+        string? first = null;
+        foreach (var root in x.Span)
+        {
+            if ((root.Kind == Kinds.Peak || root.Kind == Kinds.Plateau) && root.Transducer is { } transducer)
+            {
+                if (first is not null && first != transducer)
+                {
+                    return true;
+                }
+
+                first = transducer;
+            }
+        }
+
+        return false;
+    }
 }

@@ -72,7 +72,7 @@ public sealed class AlveolarVentilation : Definition
     /// <summary>Factor in mm[Hg]·L/mL, production in mL/min (STPD), tension in mm[Hg].</summary>
     public static double Of(double factor, double production, double tension) => factor * production / tension;
 
-    private static double Compute(Roots x) => Value.Needs.All(x.Has)
+    private static double Compute(Roots x) => Value.ComputableFrom(x)
         ? Of(x[CarbonDioxideSlots.Conversion], x[CarbonDioxideSlots.Production], x[CarbonDioxideSlots.PaCO2])
         : (x[Slots.TidalVolume] - x[Kinds.DeadSpaceVolume]) * x[Kinds.RateTotal] / 1000;
 }

@@ -82,7 +82,7 @@ public sealed class P50 : Definition
     public static double Of(double tension, double ph, double celsius, double saturation, double standard) =>
         standard * SeveringhausCurve.Standard(tension, ph, celsius) / SeveringhausCurve.Tension(saturation);
 
-    private static double Compute(Roots x) => Value.Needs.All(x.Has)
+    private static double Compute(Roots x) => Value.ComputableFrom(x)
         ? Of(x[BloodSlots.Tension], x[BloodSlots.Ph], x[BloodSlots.Temperature], (x[Saturation] - x[Misfit]) / 100, x[StandardP50])
         : SeveringhausCurve.Tension(0.5 - (x[Misfit] / 100));
 }

@@ -106,7 +106,7 @@ public sealed class MechanicalPowerVcv : Definition
         return factor * rate * (elastic + resistive + (litres * peep));
     }
 
-    private static double Compute(Roots x) => Value.Needs.All(x.Has)
+    private static double Compute(Roots x) => Value.ComputableFrom(x)
         ? Of(x[Slots.Rate], x[Slots.TidalVolume], x[Elastance.Value], x[Ratio], x[AirwayResistance.Value], x[Slots.Peep], x[Slots.PrintedWorkFactor])
         : MechanicalPowerVcvSimplified.Compute(x);
 }

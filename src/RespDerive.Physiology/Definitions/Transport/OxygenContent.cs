@@ -98,5 +98,14 @@ public sealed class OxygenContent : Definition
         && Place(OtherSaturation, saturation) != Place(OtherTension, tension);
 
     /// <summary>Options of both slots stand in the order unspecified, mixed venous, end-capillary.</summary>
-    private static int Place(Slot slot, Option option) => slot.Options.ToList().IndexOf(option);
+    private static int Place(Slot slot, Option option)
+    {
+        var place = 0;
+        while (!ReferenceEquals(slot.Options[place], option))
+        {
+            place++;
+        }
+
+        return place;
+    }
 }
