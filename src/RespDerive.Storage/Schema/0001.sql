@@ -20,7 +20,8 @@ CREATE TABLE resource (
 ) STRICT;
 CREATE INDEX resource_by_reference ON resource (source, reference);
 
--- The journal: one row per resource version, never changed.
+-- The journal: one row per resource version, never changed. links: references that URNs in the body stood for in the
+-- Bundle that brought it, a JSON object.
 CREATE TABLE version (
     id       INTEGER PRIMARY KEY,
     resource INTEGER NOT NULL REFERENCES resource (id),
@@ -33,6 +34,7 @@ CREATE TABLE version (
     arrived  INTEGER NOT NULL,
     gone     INTEGER NOT NULL,
     body     BLOB NOT NULL,
+    links    TEXT,
     UNIQUE (resource, updated, number, digest)
 ) STRICT;
 
@@ -44,6 +46,15 @@ CREATE TABLE reference (
     PRIMARY KEY (source, target, resource)
 ) STRICT, WITHOUT ROWID;
 CREATE INDEX reference_by_resource ON reference (resource);
+
+-- Names other than the reference by which the winning versions can be referred to: identifier:system|value.
+CREATE TABLE name (
+    source   TEXT NOT NULL,
+    name     TEXT NOT NULL,
+    resource INTEGER NOT NULL REFERENCES resource (id),
+    PRIMARY KEY (source, name, resource)
+) STRICT, WITHOUT ROWID;
+CREATE INDEX name_by_resource ON name (resource);
 
 -- Resources a patient's next turn has to read; the mark rises with every opening.
 CREATE TABLE open (
@@ -109,7 +120,8 @@ CREATE INDEX outcome_by_state ON outcome (state, withdrawn);
 CREATE INDEX outcome_pending ON outcome (due, at) WHERE wanted <> delivered AND parked IS NULL;
 CREATE INDEX outcome_parked ON outcome (since) WHERE parked IS NOT NULL;
 
--- asked rises with every request, so that one that comes while a fetch is under way is not lost.
+-- asked rises with every request, so that one that comes while a fetch is under way is not lost. missing: how often in a
+-- row the source did not find it, and since when.
 CREATE TABLE fetch (
     id     INTEGER PRIMARY KEY,
     source TEXT NOT NULL,
@@ -118,6 +130,8 @@ CREATE TABLE fetch (
     since  INTEGER NOT NULL,
     tries  INTEGER NOT NULL,
     due    INTEGER NOT NULL,
+    missing INTEGER NOT NULL DEFAULT 0,
+    missing_since INTEGER,
     UNIQUE (source, target)
 ) STRICT;
 CREATE INDEX fetch_by_due ON fetch (due);

@@ -115,7 +115,7 @@ public sealed class ObservationTests
         Assert.Equal(300.625m, ((Quantity)components[0].Value!).Value);
         Assert.Equal("Inspired oxygen fraction, set (14 min before)", components[2].Code.Text);
         Assert.Equal(-14m, ((FhirDecimal)components[2].GetExtension("https://respderive.example/fhir/StructureDefinition/gap-minutes")!.Value!).Value);
-        Assert.Equal("Barometric pressure (assumed)", components[4].Code.Text);
+        Assert.Equal("Barometric pressure (site policy)", components[4].Code.Text);
     }
 
     [Fact]
