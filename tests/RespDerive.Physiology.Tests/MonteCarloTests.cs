@@ -21,10 +21,10 @@ public sealed class MonteCarloTests
         new("elastance", roots => roots.Has(StaticCompliance.Value), 0.79, 0.90, "inverse of a compliance given by hand, known to 18 %"),
         new("static-compliance", roots => Relative("static-compliance", roots) > 0.2, 0.69, 0.92, "the pressure difference is known to more than about 18 %: the inverse of a difference near its own uncertainty"),
         new("dynamic-compliance", roots => Relative("dynamic-compliance", roots) > 0.2, 0.69, 0.92, "as static compliance"),
-        new("elastance-ratio", roots => !roots.Has(Kinds.EsophagealEndInspiratory), 0.85, 1.02, "ratio of two elastances given by hand"),
+        new("dlco-from-membrane-and-capillary", _ => true, 0.1, 1.1, "a capillary volume given by hand is known so badly that draws come near zero, where the value has a pole"),
         new("minimum-force-rate", roots => roots.Has(StaticCompliance.Value), 0.85, 0.95, "power of a compliance given by hand, known to 18 %"),
         new("po2-imputed-pf", roots => roots[Kinds.SpO2] > 92, 0.2, 1.1, "inverse of the flat part of the dissociation curve: the true spread is up to four times the first-order one"),
-        new("transpulmonary-pressure-elastance-derived", roots => !roots.Has(Kinds.EsophagealEndInspiratory), 0.45, 1.02, "ratio of two elastances given by hand"),
+        new("transpulmonary-pressure-elastance-derived", roots => !roots.Has(Kinds.EsophagealEndInspiratory), 0.45, 1.05, "ratio of two elastances given by hand"),
         new("work-rate-total", roots => roots.Has(StaticCompliance.Value), 0.83, 0.95, "inverse of a compliance given by hand, known to 18 %"),
     ];
 
