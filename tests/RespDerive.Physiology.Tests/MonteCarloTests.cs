@@ -11,7 +11,7 @@ namespace RespDerive.Physiology.Tests;
 public sealed class MonteCarloTests
 {
     private const int Draws = 20_000;
-    private const int Points = 16;
+    private const int Points = 8;
     private const double Agreement = 0.1;
 
     /// <summary>Where the first order is not good enough. A definition or region that is not here must agree; one that is here and agrees wherever it was visited must be taken out.</summary>
@@ -21,11 +21,11 @@ public sealed class MonteCarloTests
         new("elastance", roots => roots.Has(StaticCompliance.Value), 0.79, 0.90, "inverse of a compliance given by hand, known to 18 %"),
         new("static-compliance", roots => Relative("static-compliance", roots) > 0.2, 0.69, 0.92, "the pressure difference is known to more than about 18 %: the inverse of a difference near its own uncertainty"),
         new("dynamic-compliance", roots => Relative("dynamic-compliance", roots) > 0.2, 0.69, 0.92, "as static compliance"),
-        new("elastance-ratio", roots => roots.Has(Elastance.Value), 0.88, 1.1, "over an elastance given by hand: inverse of a value known to 18 %"),
-        new("transpulmonary-pressure-elastance-derived", roots => roots.Has(Elastance.Value), 0.5, 1.1, "as the elastance ratio"),
-        new("minimum-force-rate", roots => roots.Has(StaticCompliance.Value), 0.88, 1.1, "root of a compliance given by hand, known to 18 %"),
-        new("work-rate-total", roots => roots.Has(StaticCompliance.Value), 0.86, 1.1, "inverse of a compliance given by hand, known to 18 %"),
-        new("po2-imputed-pf", roots => roots[Kinds.SpO2] > 93, 0.24, 1.1, "the curve is so flat that SpO2 within its uncertainty means any tension; off by default"),
+        new("dlco-from-membrane-and-capillary", _ => true, 0.1, 1.1, "a capillary volume given by hand is known so badly that draws come near zero, where the value has a pole"),
+        new("minimum-force-rate", roots => roots.Has(StaticCompliance.Value), 0.85, 0.95, "power of a compliance given by hand, known to 18 %"),
+        new("po2-imputed-pf", roots => roots[Kinds.SpO2] > 92, 0.2, 1.1, "inverse of the flat part of the dissociation curve: the true spread is up to four times the first-order one"),
+        new("transpulmonary-pressure-elastance-derived", roots => !roots.Has(Kinds.EsophagealEndInspiratory), 0.45, 1.05, "ratio of two elastances given by hand"),
+        new("work-rate-total", roots => roots.Has(StaticCompliance.Value), 0.83, 0.95, "inverse of a compliance given by hand, known to 18 %"),
     ];
 
     [Theory]
@@ -79,7 +79,12 @@ public sealed class MonteCarloTests
         {
             var example = examples[attempt % examples.Length];
             var transducer = found.Count % 2 == 1 && example.All.Count(root => root.Spread.Zero) > 1 ? "one" : null;
-            var roots = new Roots(example.All.Select(root => root with { Value = Near(root, random), Transducer = root.Spread.Zero ? definition.OneTransducer.Contains(root.Kind) ? "one" : transducer : null }));
+            var reach = attempt % 2 == 0 ? 0.4 : 0.4 / (1 + (attempt / 1000));
+            var roots = new Roots(example.All.Select(root => root with
+            {
+                Value = Near(root, reach, random),
+                Transducer = root.Spread.Zero ? transducer ?? (definition.OneTransducer.Contains(root.Kind) ? "one breath" : null) : null,
+            }));
             var computed = Computation.Of(definition, roots);
             if (computed.Withheld is null && computed.Uncertainty > 0
                 && (definition.GreatestRelativeUncertainty is not null || (computed.Value >= definition.Usual.Least && computed.Value <= definition.Usual.Greatest)))
@@ -91,9 +96,9 @@ public sealed class MonteCarloTests
         return found;
     }
 
-    private static double Near(Root root, Random random) => root.Kind.IsCoded || root.Assumed
+    private static double Near(Root root, double reach, Random random) => root.Kind.IsCoded || root.Assumed
         ? root.Value
-        : Math.Clamp(root.Value * (0.6 + (0.8 * random.NextDouble())), root.Kind.Least, root.Kind.Greatest);
+        : Math.Clamp(root.Value * (1 - reach + (2 * reach * random.NextDouble())), root.Kind.Least, root.Kind.Greatest);
 
     private static double Ratio(Definition definition, Roots roots, Random random)
     {

@@ -45,6 +45,8 @@ public sealed class DocsTests
     [InlineData("A = 1 / (1 + (B/C)^2.7)", @"\mathrm{A} = \frac{1}{1 + \left(\frac{\mathrm{B}}{\mathrm{C}}\right)^{2.7}}")]
     [InlineData("A = (B + C)·(D + E)/2", @"\mathrm{A} = \frac{\left(\mathrm{B} + \mathrm{C}\right)\cdot \left(\mathrm{D} + \mathrm{E}\right)}{2}")]
     [InlineData("SO2 = exp(1.1·ln(PO2) − 3e-4)", @"\mathrm{SO_{2}} = \exp\left(1.1\cdot \ln\left(\mathrm{PO_{2}}\right) - 3\cdot 10^{-4}\right)")]
+    [InlineData("A = ∛(B + √(C² + 4π²))", @"\mathrm{A} = \sqrt[3]{\mathrm{B} + \sqrt{\mathrm{C}^{2} + 4\cdot \mathrm{π}^{2}}}")]
+    [InlineData("A = B/C, C = max(D, 1), D in %", @"\begin{gathered} \mathrm{A} = \frac{\mathrm{B}}{\mathrm{C}} \\ \mathrm{C} = \max\left(\mathrm{D}, 1\right) \\ \text{D in \%} \end{gathered}")]
     [InlineData("A = B − C (= D)", @"\mathrm{A} = \mathrm{B} - \mathrm{C} = \mathrm{D}")]
     [InlineData("dP = Pes_ei − −3", null)]
     [InlineData("A = 50 (male) or 45 (female)", null)]

@@ -21,18 +21,5 @@ internal sealed class Plan(Definition definition)
     public Kind[] Watched => _watched ??= [.. Gates.SelectMany(gate => gate.Reads).Concat(FlagRules.SelectMany(rule => rule.Reads)).Distinct()];
 
     /// <summary>The slots by which the value can be had from these roots: its own, else those of the identity.</summary>
-    public Slot[] Path(Roots roots) => ByIdentity.Length > 0 && !All(Needs, roots) && All(ByIdentity, roots) ? ByIdentity : Needs;
-
-    private static bool All(Slot[] slots, Roots roots)
-    {
-        foreach (var slot in slots)
-        {
-            if (!roots.Has(slot))
-            {
-                return false;
-            }
-        }
-
-        return true;
-    }
+    public Slot[] Path(Roots roots) => ByIdentity.Length > 0 && !roots.HasAll(Needs) && roots.HasAll(ByIdentity) ? ByIdentity : Needs;
 }

@@ -115,6 +115,20 @@ public sealed class Roots
     /// <summary>True when one option of the slot is complete.</summary>
     public bool Has(Slot slot) => Filled(slot) != Unfilled;
 
+    /// <summary>True when one option of each slot is complete.</summary>
+    public bool HasAll(IReadOnlyList<Slot> slots)
+    {
+        for (var i = 0; i < slots.Count; i++)
+        {
+            if (!Has(slots[i]))
+            {
+                return false;
+            }
+        }
+
+        return true;
+    }
+
     /// <summary>Code of a coded root; null when absent.</summary>
     public string? Code(Kind kind) => Place(kind) is var place && place != Absent ? kind.Codes[(int)_values[place - 1]] : null;
 

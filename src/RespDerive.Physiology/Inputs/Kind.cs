@@ -118,23 +118,7 @@ public sealed class Kind
         new(key, symbol, name, Origin.Derived) { Codes = codes, RangeCode = Withheld.Impossible, Formula = formula, Needs = needs };
 
     /// <summary>True when the formula of this kind has all it needs.</summary>
-    internal bool ComputableFrom(Roots roots)
-    {
-        if (Formula is null)
-        {
-            return false;
-        }
-
-        for (var i = 0; i < Needs.Count; i++)
-        {
-            if (!roots.Has(Needs[i]))
-            {
-                return false;
-            }
-        }
-
-        return true;
-    }
+    internal bool ComputableFrom(Roots roots) => Formula is not null && roots.HasAll(Needs);
 
     /// <inheritdoc/>
     public override string ToString() => Key;

@@ -114,6 +114,9 @@ public sealed record Slot(string Name, IReadOnlyList<Option> Options, string Mis
     /// <remarks>A copy made by <c>with</c> is another slot and takes a number of its own.</remarks>
     internal int Number => ReferenceEquals(Volatile.Read(ref _numbered), this) ? _number : Numbered();
 
+    /// <summary>The option that fills the slot; null when none does.</summary>
+    internal Option? Chosen(Roots roots) => roots.Chosen(this);
+
     /// <summary>A slot is equal to itself only: two definitions may ask for the same thing in two slots.</summary>
     public bool Equals(Slot? other) => ReferenceEquals(this, other);
 

@@ -2,12 +2,12 @@ using System.Text.RegularExpressions;
 
 namespace RespDerive.Docs;
 
-/// <summary>Simple algebra as LaTeX: sums, products, quotients, powers, functions of the trade, several equalities. Anything else is left as text.</summary>
+/// <summary>Simple algebra as LaTeX: sums, products, quotients, powers, roots and a few functions. Where it ends, the equation stays text.</summary>
 internal sealed partial class Latex
 {
     private static readonly Dictionary<string, string> Functions = new(StringComparer.Ordinal)
     {
-        ["exp"] = @"\exp", ["ln"] = @"\ln", ["log10"] = @"\log_{10}", ["min"] = @"\min", ["max"] = @"\max",
+        ["exp"] = @"\exp", ["ln"] = @"\ln", ["log10"] = @"\log_{10}", ["tanh"] = @"\tanh", ["min"] = @"\min", ["max"] = @"\max",
     };
 
     private readonly string[] _tokens;
@@ -20,12 +20,21 @@ internal sealed partial class Latex
     {
         // "a = b (= c)" says that c is the same by identity.
         var plain = Identity().Replace(equation, " = $1");
-        var clauses = plain.Split("; ").Select(Clause).ToArray();
-        return clauses.Contains(null) ? null : string.Join(@" \\ ", clauses);
+        var clauses = Clauses().Split(plain);
+        if (Clause(clauses[0]) is not { } first)
+        {
+            return null;
+        }
+
+        // What follows is a further equation, or words: "PCO2 in kPa".
+        return clauses.Length == 1 ? first : @"\begin{gathered} " + string.Join(@" \\ ", clauses.Skip(1).Select(clause => Clause(clause) ?? Words(clause)).Prepend(first)) + @" \end{gathered}";
     }
+
+    private static string Words(string text) => @"\text{" + Special().Replace(text, @"\$0").Replace(@"\^", @"\^{}", StringComparison.Ordinal) + "}";
 
     private static string? Clause(string text)
     {
+        text = BeforePi().Replace(text, "·");
         var tokens = Token().Matches(text).Select(match => match.Value).ToArray();
         if (tokens.Length == 0 || string.Concat(tokens) != text.Replace(" ", "", StringComparison.Ordinal))
         {
@@ -36,12 +45,13 @@ internal sealed partial class Latex
         {
             var latex = new Latex(tokens);
             var equation = latex.Sum();
+            var isEquation = latex.Next == "=";
             while (latex.Take("="))
             {
                 equation += " = " + latex.Sum();
             }
 
-            return latex._at == tokens.Length ? equation.Replace("(", @"\left(", StringComparison.Ordinal).Replace(")", @"\right)", StringComparison.Ordinal) : null;
+            return isEquation && latex._at == tokens.Length ? equation.Replace("(", @"\left(", StringComparison.Ordinal).Replace(")", @"\right)", StringComparison.Ordinal) : null;
         }
         catch (FormatException)
         {
@@ -75,9 +85,9 @@ internal sealed partial class Latex
     private string Power()
     {
         var power = Atom();
-        while (Next is "^" or "²" or "³")
+        while (Next is "^" or "²" or "³" or "⁴" or "⁵" or "⁶")
         {
-            power += "^{" + (_tokens[_at++] switch { "²" => "2", "³" => "3", _ => (Take("−") || Take("-") ? "-" : "") + Bare(Atom()) }) + "}";
+            power += "^{" + (_tokens[_at++] switch { "²" => "2", "³" => "3", "⁴" => "4", "⁵" => "5", "⁶" => "6", _ => (Take("−") || Take("-") ? "-" : "") + Bare(Atom()) }) + "}";
         }
 
         return power;
@@ -97,9 +107,9 @@ internal sealed partial class Latex
             return Scientific().Replace(token, @"$1\cdot 10^{$2}");
         }
 
-        if (token == "sqrt" && Next == "(")
+        if (token is "√" or "∛" or "sqrt" && Next == "(")
         {
-            return $@"\sqrt{{{Bare(Atom())}}}";
+            return $@"\sqrt{(token == "∛" ? "[3]" : "")}{{{Bare(Atom())}}}";
         }
 
         if (Functions.TryGetValue(token, out var function) && Take("("))
@@ -154,8 +164,17 @@ internal sealed partial class Latex
         return part[1..^1];
     }
 
-    [GeneratedRegex(@"\d+(\.\d+)?([eE][+-]?\d+)?|\p{L}[\p{L}\d_'′]*|[-+−·*×/^²³()=,]")]
+    [GeneratedRegex(@"\d+(\.\d+)?([eE][+-]?\d+)?|\p{L}[\p{L}\d_'′]*|[-+−·*×/^²³⁴⁵⁶√∛()=,]")]
     private static partial Regex Token();
+
+    [GeneratedRegex("; |, (?![^(]*\\))")]
+    private static partial Regex Clauses();
+
+    [GeneratedRegex(@"(?<=\d)(?=π)")]
+    private static partial Regex BeforePi();
+
+    [GeneratedRegex("[_%#&^]")]
+    private static partial Regex Special();
 
     [GeneratedRegex(@" \(= (.+)\)$")]
     private static partial Regex Identity();

@@ -26,6 +26,8 @@ public class CodeMapTests
     [
         "esophageal-pressure", "esophageal-pressure-end-inspiratory", "esophageal-pressure-end-expiratory",
         "ie-ratio-set", "pressure-rise-time-set", "dead-space-volume",
+        "scvo2", "po2-mixed-venous", "mixed-expired-co2", "mean-alveolar-pco2",
+        "alveolar-volume", "membrane-conductance-no", "inverse-theta-capillary-volume", "alveolar-po2-breath-hold",
     ];
 
     [Fact]
