@@ -112,10 +112,10 @@ internal static class CatalogueText
         + string.Concat(bands.Criteria.Select(criterion => Columns.Note("Criterion",
             $"{criterion.Name} by {criterion.Number.Result.Symbol}, rising: {Cuts(criterion)}; a cut-point itself belongs {(criterion.CutIsBelow ? "below" : "above")}")));
 
-    private static string Cuts(Criterion criterion) =>
+    public static string Cuts(Criterion criterion) =>
         string.Concat(criterion.Codes.Select((code, i) => i < criterion.Cuts.Count ? string.Create(CultureInfo.InvariantCulture, $"{code} | {criterion.Cuts[i]} | ") : code));
 
-    private static string Expected(Kind result, Vector vector) =>
+    public static string Expected(Kind result, Vector vector) =>
         result.IsCoded ? result.Codes[(int)vector.Expected] : Figures.Plain(vector.Expected) + Figures.Unit(result.Unit);
 
     private static string CalledFor(Definition definition)

@@ -38,8 +38,18 @@ internal static class DefinitionPage
             page.Paragraph("By hand also from: " + string.Join(", ", definition.ByIdentity.Select(slot => slot.Name)) + ".");
         }
 
+        if (definition is Classification bands)
+        {
+            page.Heading("Bands")
+                .Table(["Code", "Meaning"], result.Codes.Select(code => new[] { $"`{code}`", bands.Text(code) }))
+                .Table(["Criterion", "By", "Bands, rising", "A cut-point itself belongs"], bands.Criteria.Select(criterion => new[]
+                {
+                    criterion.Name, $"[{criterion.Number.Key}]({criterion.Number.Key}.md)", CatalogueText.Cuts(criterion), criterion.CutIsBelow ? "below" : "above",
+                }));
+        }
+
         page.Heading("Withheld")
-            .Paragraph($"Outside {Range(result)} it is physically impossible and withheld."
+            .Paragraph((result.IsCoded ? "Where the number it is taken from is physically impossible it is withheld." : $"Outside {Range(result)} it is physically impossible and withheld.")
                 + (definition.GreatestRelativeUncertainty is { } greatest ? $" So it is above a relative standard uncertainty of {Figures.Percent(greatest)}." : ""));
         if (definition.Gates.Count > 0)
         {
@@ -50,7 +60,7 @@ internal static class DefinitionPage
             .Heading("Worked example")
             .Block("text", Example(definition, catalogue))
             .Heading("Evidence")
-            .Table(["Kind", "Source", "Inputs", "Expected", "Within"], definition.Vectors.Select(Vector))
+            .Table(["Kind", "Source", "Inputs", "Expected", "Within"], definition.Vectors.Select(vector => Row(result, vector)))
             .Heading("Sources")
             .List(definition.Citations.Select(citation => citation.Text + (citation.Doi is { } doi ? $" [doi:{doi}](https://doi.org/{doi})" : "")))
             .ToString();
@@ -112,10 +122,10 @@ internal static class DefinitionPage
         return $"$ {ComputeText.Command(definition, given)}\n{ComputeText.Of(ByHand.Compute(definition, given, catalogue))}";
     }
 
-    private static string[] Vector(Vector vector) =>
+    private static string[] Row(Kind result, Vector vector) =>
     [
         vector.Evidence switch { Evidence.Published => "published", Evidence.Limit => "limit", _ => "regression" },
-        vector.Source, Inputs(vector.Inputs), Figures.Plain(vector.Expected), vector.Within.ToString("0.##########", CultureInfo.InvariantCulture),
+        vector.Source, Inputs(vector.Inputs), CatalogueText.Expected(result, vector), vector.Within.ToString("0.##########", CultureInfo.InvariantCulture),
     ];
 
     private static string Inputs(IEnumerable<Given> given) => string.Join(", ", given.Select(one => $"`{one.Name}` {one.Typed}"));
