@@ -85,8 +85,12 @@ internal static class DefinitionPage
             yield return ["Called for by", $"{AnchorsPage.Anchors(definition.Calling)} ({AnchorsPage.Context(definition.Calling)}; {AnchorsPage.Cadence(definition.Calling)})"];
         }
 
-        yield return ["Usual", $"{Figures.Plain(definition.Usual.Least)} to {Figures.Plain(definition.Usual.Greatest)}{Figures.Unit(result.Unit)}"];
-        yield return ["Possible", Range(result)];
+        if (!result.IsCoded)
+        {
+            yield return ["Usual", $"{Figures.Plain(definition.Usual.Least)} to {Figures.Plain(definition.Usual.Greatest)}{Figures.Unit(result.Unit)}"];
+            yield return ["Possible", Range(result)];
+        }
+
         yield return ["Standard codes", definition.Codes.Count == 0 ? "none is verified for exactly this value" : string.Join("<br>", definition.Codes.Select(code => $"`{code.System}` `{code.Code}` {code.Display}"))];
     }
 
