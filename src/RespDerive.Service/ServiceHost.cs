@@ -48,6 +48,9 @@ public static class ServiceHost
         AddIntake(services);
         services.AddSingleton<PatientTurn>();
         services.AddSingleton<Target>();
+        services.AddSingleton<Testimony>();
+        services.AddSingleton<Copies>();
+        services.AddSingleton<Recovery>();
         services.AddSingleton<Postman>();
         Run<Sweeper>(services);
         Run<Sender>(services);

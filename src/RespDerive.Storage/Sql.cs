@@ -127,7 +127,8 @@ internal static class Sql
     // $3 now. Nothing more is wanted of what a person has withdrawn.
     public const string SetOutcome =
         """
-        INSERT INTO outcome (identity, patient, definition, at, state, withheld, body, wanted, since, due) VALUES ($1, $2, $4, $5, $6, $7, $8, 1, $3, $3)
+        INSERT INTO outcome (identity, patient, definition, at, state, withheld, body, wanted, since, recorded, due)
+        VALUES ($1, $2, $4, $5, $6, $7, $8, 1, $3, $3, $3)
         ON CONFLICT (identity) DO UPDATE SET
             definition = excluded.definition, at = excluded.at, state = excluded.state, withheld = excluded.withheld, body = excluded.body,
             valued = CASE WHEN excluded.state = 1 THEN NULL WHEN outcome.state = 1 THEN outcome.body ELSE outcome.valued END,
@@ -141,6 +142,7 @@ internal static class Sql
     private const string Want =
         """
             wanted = outcome.wanted + 1 - outcome.withdrawn,
+            recorded = $3,
             since = CASE WHEN outcome.wanted = outcome.delivered THEN $3 ELSE outcome.since END,
             due = CASE WHEN outcome.wanted = outcome.delivered THEN $3 ELSE outcome.due END
         """;
@@ -149,8 +151,8 @@ internal static class Sql
     private const string DeliveryColumns =
         """
         SELECT identity, patient, body, valued, wanted, delivered, revisions, final_seen, server_id, server_version,
-               tries, due, since, parked, parked_text, withdrawn, retracted
-        FROM outcome
+               tries, due, since, parked, parked_text, withdrawn, retracted, recorded, counter, digest, evidence
+        FROM outcome LEFT JOIN attempt USING (identity)
         """;
 
     public const string DueDeliveries = DeliveryColumns +
@@ -180,6 +182,14 @@ internal static class Sql
         filter.To is null ? "" : " AND at <= $4",
         " ORDER BY patient, definition, at, identity");
 
+    public const string MarkAttempt =
+        """
+        INSERT INTO attempt (identity, counter, digest, evidence) SELECT identity, $2, $3, $4 FROM outcome WHERE identity = $1 AND withdrawn = 0
+        ON CONFLICT (identity) DO UPDATE SET counter = excluded.counter, digest = excluded.digest, evidence = excluded.evidence
+        """;
+
+    public const string EndAttempt = "DELETE FROM attempt WHERE identity = $1 AND counter <= $2";
+
     public const string MarkDelivered =
         """
         UPDATE outcome SET delivered = $2, revisions = revisions + 1, server_id = $3, server_version = $4,
@@ -189,8 +199,8 @@ internal static class Sql
 
     public const string Adopt =
         """
-        UPDATE outcome SET revisions = max(revisions, 1), server_id = $2, server_version = $3,
-            final_seen = CASE WHEN $4 = 1 THEN 1 ELSE final_seen END, tries = 0, due = 0
+        UPDATE outcome SET server_id = $2, server_version = $3, revisions = $4,
+            final_seen = CASE WHEN $5 = 1 THEN 1 ELSE final_seen END, retracted = $6, tries = 0, due = 0
         WHERE identity = $1 AND withdrawn = 0
         """;
 

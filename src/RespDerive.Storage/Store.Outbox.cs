@@ -17,6 +17,17 @@ public sealed partial class Store
     /// <summary>Outcome and delivery state of an identity; null when it was never computed.</summary>
     public Delivery? FindDelivery(Guid identity) => _readers.Read(session => session.One(Sql.FindDelivery, ReadDelivery, Columns.Identity(identity)));
 
+    /// <summary>
+    /// An edition is about to be sent; until the server's answer is marked, the server may hold it. Replaces the attempt before it.
+    /// </summary>
+    /// <param name="identity">The result.</param>
+    /// <param name="attempt">What is sent.</param>
+    public Task<bool> MarkAttemptAsync(Guid identity, Attempt attempt)
+    {
+        ArgumentNullException.ThrowIfNull(attempt);
+        return UpdateAsync(Sql.MarkAttempt, identity, attempt.Wanted, attempt.Digest, attempt.Evidence);
+    }
+
     /// <summary>The server has taken the edition. False when it was marked before.</summary>
     /// <param name="identity">The result.</param>
     /// <param name="wanted">The counter of the edition that was sent; a later one stays pending.</param>
@@ -29,15 +40,22 @@ public sealed partial class Store
         var marked = session.Execute(Sql.MarkDelivered, Columns.Identity(identity), wanted, serverId, serverVersion, finalSeen ? 1 : 0, retracted ? 1 : 0) == 1;
         if (marked)
         {
+            session.Execute(Sql.EndAttempt, Columns.Identity(identity), wanted);
             Count(session, Tallies.Delivered);
         }
 
         return marked;
     });
 
-    /// <summary>The server holds an older edition of ours that we had lost sight of; the wanted one stays pending, due at once.</summary>
-    public Task<bool> AdoptAsync(Guid identity, string serverId, string serverVersion, bool finalSeen) =>
-        UpdateAsync(Sql.Adopt, identity, serverId, serverVersion, finalSeen ? 1 : 0);
+    /// <summary>The server holds an edition of ours that we had lost sight of; the wanted one stays pending, due at once.</summary>
+    /// <param name="identity">The result.</param>
+    /// <param name="serverId">Logical id.</param>
+    /// <param name="serverVersion">Version that the server gave it.</param>
+    /// <param name="revision">Revision of the edition; later ones count from it.</param>
+    /// <param name="finalSeen">The edition is final, amended or corrected, or follows one.</param>
+    /// <param name="retracted">The edition is a retraction.</param>
+    public Task<bool> AdoptAsync(Guid identity, string serverId, string serverVersion, long revision, bool finalSeen, bool retracted) =>
+        EndAsync(Sql.Adopt, identity, serverId, serverVersion, revision, finalSeen ? 1 : 0, retracted ? 1 : 0);
 
     /// <summary>There is nothing to send for the edition, as for a value withheld from the start.</summary>
     public Task<bool> MarkNothingToSendAsync(Guid identity, long wanted) => UpdateAsync(Sql.MarkNothingToSend, identity, wanted);
@@ -55,7 +73,7 @@ public sealed partial class Store
     public Task<bool> DropAsync(Guid identity) => UpdateAsync(Sql.Drop, identity);
 
     /// <summary>A person has withdrawn the result at the server: final, no further edition is ever sent.</summary>
-    public Task<bool> WithdrawnByPersonAsync(Guid identity) => UpdateAsync(Sql.WithdrawByPerson, identity);
+    public Task<bool> WithdrawnByPersonAsync(Guid identity) => EndAsync(Sql.WithdrawByPerson, identity);
 
     /// <summary>Since when the oldest delivery waits that is not parked; null when none does.</summary>
     public DateTimeOffset? OldestPending() =>
@@ -63,6 +81,18 @@ public sealed partial class Store
 
     private Task<bool> UpdateAsync(string sql, Guid identity, params object?[] values) =>
         _writer.RunAsync(session => session.Execute(sql, [Columns.Identity(identity), .. values]) == 1);
+
+    // what was attempted before is known now
+    private Task<bool> EndAsync(string sql, Guid identity, params object?[] values) => _writer.RunAsync(session =>
+    {
+        var ended = session.Execute(sql, [Columns.Identity(identity), .. values]) == 1;
+        if (ended)
+        {
+            session.Execute(Sql.EndAttempt, Columns.Identity(identity), long.MaxValue);
+        }
+
+        return ended;
+    });
 
     private Delivery ReadDelivery(SqliteDataReader row)
     {
@@ -87,6 +117,8 @@ public sealed partial class Store
             ParkedText = Columns.OptionalText(row, 14),
             WithdrawnByPerson = row.GetInt64(15) == 1,
             Retracted = row.GetInt64(16) == 1,
+            Recorded = Columns.Time(row.GetInt64(17)),
+            Attempt = Columns.OptionalText(row, 19) is { } digest ? new Attempt(row.GetInt64(18), digest, row.GetFieldValue<byte[]>(20)) : null,
         };
     }
 }

@@ -124,6 +124,75 @@ public sealed class OutboxTests
     }
 
     [Fact]
+    public async Task Waiting_counts_from_the_first_change_and_the_record_from_the_last()
+    {
+        await using var temporary = new TemporaryStore();
+        var patient = await temporary.PatientAsync();
+        await temporary.CommitOutcomesAsync(patient, 1, First);
+        await temporary.CommitOutcomesAsync(patient, 2, First with { Value = 150 });
+        var changed = Assert.Single(temporary.Store.DueDeliveries(Some.At(2), 10));
+        await temporary.CommitAsync(patient, new TurnChanges { Outcomes = [new OutcomeChange(First.Identity, First, null)] }, 3);
+        var gone = Assert.Single(temporary.Store.DueDeliveries(Some.At(3), 10));
+
+        Assert.Equal((Some.At(1), Some.At(2)), (changed.Since, changed.Recorded));
+        Assert.Equal((Some.At(1), Some.At(3)), (gone.Since, gone.Recorded));
+        Assert.Equal(Some.At(1), temporary.Store.OldestPending());
+    }
+
+    [Fact]
+    public async Task An_attempt_stands_until_its_edition_or_a_later_one_is_delivered()
+    {
+        await using var temporary = new TemporaryStore();
+        var patient = await temporary.PatientAsync();
+        await temporary.CommitOutcomesAsync(patient, 1, First);
+        Assert.True(await temporary.Store.MarkAttemptAsync(First.Identity, new Attempt(1, "one", [1])));
+        await temporary.CommitOutcomesAsync(patient, 2, First with { Value = 150 });
+        await temporary.ReopenAsync();
+
+        var unsure = Assert.Single(temporary.Store.DueDeliveries(Some.At(2), 10));
+        Assert.Equal((2, 1, "one"), (unsure.Wanted, unsure.Attempt!.Wanted, unsure.Attempt.Digest));
+        Assert.Equal([1], unsure.Attempt.Evidence);
+        Assert.True(await temporary.Store.MarkDeliveredAsync(First.Identity, 1, "77", "1", finalSeen: true));
+        var next = Assert.Single(temporary.Store.DueDeliveries(Some.At(2), 10));
+        Assert.Equal((null, 1, 1), (next.Attempt, next.Delivered, next.Revisions));
+
+        await temporary.Store.MarkAttemptAsync(First.Identity, new Attempt(2, "two", [2]));
+        await temporary.Store.MarkRetryAsync(First.Identity, 1, Some.At(3));
+        Assert.Equal("two", temporary.Store.FindDelivery(First.Identity)!.Attempt!.Digest);
+        await temporary.Store.MarkDeliveredAsync(First.Identity, 2, "77", "2", finalSeen: true);
+        Assert.Null(temporary.Store.FindDelivery(First.Identity)!.Attempt);
+    }
+
+    [Fact]
+    public async Task An_adopted_edition_settles_the_attempt_and_counts_on_from_its_revision()
+    {
+        await using var temporary = new TemporaryStore();
+        await temporary.CommitOutcomesAsync(await temporary.PatientAsync(), 1, First);
+        await temporary.Store.MarkAttemptAsync(First.Identity, new Attempt(1, "one", [1]));
+        await temporary.Store.MarkRetryAsync(First.Identity, 1, Some.At(30));
+
+        Assert.True(await temporary.Store.AdoptAsync(First.Identity, "77", "5", 4, finalSeen: true, retracted: true));
+
+        var due = Assert.Single(temporary.Store.DueDeliveries(Some.At(2), 10));
+        Assert.Equal((null, 4, "77", "5", 0), (due.Attempt, due.Revisions, due.ServerId, due.ServerVersion, due.Tries));
+        Assert.True(due is { FinalSeen: true, Retracted: true, IsPending: true });
+    }
+
+    [Fact]
+    public async Task Nothing_is_attempted_of_what_is_unknown_or_withdrawn_by_a_person()
+    {
+        await using var temporary = new TemporaryStore();
+        Assert.False(await temporary.Store.MarkAttemptAsync(First.Identity, new Attempt(1, "one", [1])));
+        await temporary.CommitOutcomesAsync(await temporary.PatientAsync(), 1, First);
+        await temporary.Store.MarkAttemptAsync(First.Identity, new Attempt(1, "one", [1]));
+
+        await temporary.Store.WithdrawnByPersonAsync(First.Identity);
+
+        Assert.Null(temporary.Store.FindDelivery(First.Identity)!.Attempt);
+        Assert.False(await temporary.Store.MarkAttemptAsync(First.Identity, new Attempt(2, "two", [2])));
+    }
+
+    [Fact]
     public async Task A_parked_result_waits_for_a_person_and_is_resent_or_dropped()
     {
         await using var temporary = new TemporaryStore();

@@ -98,27 +98,27 @@ public sealed partial class FhirServer
         return found;
     }
 
-    /// <summary>The Provenance of a target that carries our id of it, so that a resend does not add a second one; null when there is none.</summary>
+    /// <summary>What we have testified about a target; Provenances of others are left out.</summary>
     /// <param name="target"><c>Observation/id</c>.</param>
-    /// <param name="extension">URL of the extension that holds our id.</param>
-    /// <param name="id">The id, <c>urn:uuid:…</c>.</param>
+    /// <param name="words">Names of our extensions.</param>
     /// <param name="cancel">Cancels.</param>
     /// <exception cref="SearchFailedException">The search failed.</exception>
-    public async Task<ServerAnswer.Delivered?> FindProvenanceAsync(string target, string extension, string id, CancellationToken cancel = default)
+    public async Task<IReadOnlyList<OwnProvenance>> OwnProvenancesAsync(string target, Vocabulary words, CancellationToken cancel = default)
     {
+        var found = new List<OwnProvenance>();
         await foreach (var page in SearchAsync($"Provenance?target={Uri.EscapeDataString(target)}", cancel))
         {
             foreach (var entry in page.Entries)
             {
                 using var json = JsonDocument.Parse(entry.Resource);
-                if (json.RootElement.Items("extension").Any(item => item.Text("url") == extension && item.Text("valueString") == id))
+                if (OwnProvenance.Of(json.RootElement, words) is { } ours)
                 {
-                    return Landing.Of(json.RootElement, "Provenance", null, null);
+                    found.Add(ours);
                 }
             }
         }
 
-        return null;
+        return found;
     }
 
     /// <summary>Creates a resource; with <paramref name="ifNoneExist"/> (query part only) unless one matches.</summary>

@@ -40,6 +40,12 @@ public sealed record Edition
     /// <summary>Withheld code that explains a retraction; null when the input itself was withdrawn or the anchor no longer calls.</summary>
     public string? Withheld { get; init; }
 
+    /// <summary>Retracted because the server holds the same result twice; the other copy stands.</summary>
+    public bool IsSecondCopy { get; init; }
+
+    /// <summary>True for a settled state.</summary>
+    public bool IsFinal => Status is EditionStatus.Final or EditionStatus.Amended or EditionStatus.Corrected;
+
     /// <summary>True for a retraction.</summary>
     public bool IsRetraction => Status == EditionStatus.EnteredInError;
 }

@@ -31,7 +31,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
         if (edition.IsRetraction)
         {
             observation.DataAbsentReason = new CodeableConcept(Vocabulary.DataAbsentReason, "error", "Error", null);
-            observation.Note = [new Annotation { Text = new Markdown("Withdrawn: the value published before no longer stands. " + Reason(edition)) }];
+            observation.Note = [new Annotation { Text = new Markdown(Reason(edition)) }];
             return observation;
         }
 
@@ -186,7 +186,9 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
 
     private string Name(string kind) => Kinds.Find(kind)?.Name ?? catalogue.Find(kind)?.Result.Name ?? kind;
 
-    private static string Reason(Edition edition) => edition.Withheld is { } code ? Withheld.Text(code) : "A value it rested on was withdrawn or replaced.";
+    private static string Reason(Edition edition) => edition.IsSecondCopy
+        ? "Withdrawn: a second copy of one result; the other copy stands."
+        : "Withdrawn: the value published before no longer stands. " + (edition.Withheld is { } code ? Withheld.Text(code) : "A value it rested on was withdrawn or replaced.");
 
     private static string Capital(string text) => text.Length == 0 ? text : char.ToUpperInvariant(text[0]) + text[1..];
 }

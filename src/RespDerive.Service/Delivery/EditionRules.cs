@@ -9,8 +9,7 @@ public static class EditionRules
 {
     /// <summary>The outcome to render and its edition; null when there is nothing to send.</summary>
     /// <param name="delivery">State of the result.</param>
-    /// <param name="existed">True when an earlier attempt may have reached the server although none was confirmed.</param>
-    public static (Outcome Outcome, Edition Edition)? Of(Storage.Delivery delivery, bool existed = false)
+    public static (Outcome Outcome, Edition Edition)? Of(Storage.Delivery delivery)
     {
         ArgumentNullException.ThrowIfNull(delivery);
         var current = delivery.Current;
@@ -19,7 +18,7 @@ public static class EditionRules
             return (current, Edition(delivery, StatusOf(delivery, current)));
         }
 
-        return delivery is { LastValued: { } last, Retracted: false } && (delivery.Revisions > 0 || existed)
+        return delivery is { LastValued: { } last, Retracted: false, Revisions: > 0 }
             ? (last, Edition(delivery, EditionStatus.EnteredInError) with { Withheld = current?.Withheld })
             : null;
     }
@@ -33,7 +32,7 @@ public static class EditionRules
     private static Edition Edition(Storage.Delivery delivery, EditionStatus status) => new()
     {
         Status = status,
-        Recorded = delivery.Since,
+        Recorded = delivery.Recorded,
         Revision = (int)delivery.Revisions + 1,
         ServerId = delivery.ServerId,
         PreviousVersion = delivery.ServerVersion,

@@ -9,209 +9,118 @@ using Outcome = RespDerive.Timeline.Outcome;
 namespace RespDerive.Service.Delivery;
 
 /// <summary>
-/// Delivers one edition idempotently. What people changed at the server is never overwritten, and nothing whose outcome is unknown
-/// is sent again before looking what the server holds.
+/// Delivers one edition idempotently. What is about to be sent is written down first, so that after a lost answer or a crash we
+/// look what the server holds before anything else is sent. What people changed at the server is never overwritten.
 /// </summary>
-internal sealed class Postman(Target target, Site site, Store store, IOptions<ServiceOptions> options)
+internal sealed class Postman(Target target, Site site, Store store, Recovery recovery, Copies copies, IOptions<ServiceOptions> options)
 {
-    private const string Foreign = "foreign-edit";
     private readonly HashSet<string> _libraries = new(StringComparer.Ordinal);
     private readonly Lock _lock = new();
 
     private FhirServer Server => target.Server;
 
-    /// <summary>True when our Device is at the server, so that results can point at it.</summary>
-    public Task<bool> ReadyAsync(CancellationToken cancel) => target.ReadyAsync(cancel);
-
     public async Task<Became> DeliverAsync(Storage.Delivery delivery, CancellationToken cancel)
     {
-        if (delivery.Current is { } current && !options.Value.Delivery.PublishHistory && current.At < StartOf(store))
+        if (delivery.Attempt is null && IsContext(delivery))
         {
             return new Became.Nothing();
         }
 
-        // A failed try may have reached the server all the same.
-        if (delivery.Tries > 0)
+        if (recovery.MustLook(delivery) && await recovery.LookAsync(delivery, cancel) is { } seen)
         {
-            if (await LookAsync(delivery, cancel) is { } seen)
-            {
-                return seen;
-            }
+            return seen;
         }
 
-        if (EditionRules.Of(delivery) is not var (outcome, edition))
+        if (IsContext(delivery) || EditionRules.Of(delivery) is not var (outcome, edition))
         {
-            return new Became.Nothing();
+            // What was attempted is not there; a search that lags would say the same.
+            return delivery is { Attempt: not null, ServerId: null, Tries: < Recovery.Patience } ? new Became.Again(null) : new Became.Nothing();
         }
 
-        var renderer = target.Renderer;
-        var answer = await SendAsync(renderer, outcome, edition, cancel);
-        return answer switch
+        var libraries = LibrariesNeeded(outcome);
+        Bundle bundle;
+        try
         {
-            ServerAnswer.Delivered { Existed: false } there when edition.PreviousVersion is null && !await IsOnlyOneAsync(delivery.Identity, there.Id, cancel) => new Became.Again(null),
-            ServerAnswer.Delivered { Existed: false } there => Delivered(outcome, edition, there),
-            ServerAnswer.Delivered or ServerAnswer.Conflict or ServerAnswer.Unknown => await LookAsync(delivery, cancel) ?? new Became.Again(null),
-            ServerAnswer.Gone => new Became.Parked("deleted-at-server", "The result was deleted at the server."),
-            ServerAnswer.Retry retry => new Became.Again(retry.After),
-            ServerAnswer.Parked parked => new Became.Parked(parked.Code, parked.Text),
-            _ => new Became.Again(null),
+            bundle = Render(outcome, edition, libraries);
+        }
+        catch (Exception exception)
+        {
+            return new Became.Parked("not-renderable", $"The result cannot be written as FHIR ({exception.GetType().Name}).");
+        }
+
+        var attempt = new Attempt(delivery.Wanted, ContentDigest.Of((Observation)bundle.Entry[0].Resource!), FhirJson.Bytes(bundle.Entry[1].Resource!));
+        await store.MarkAttemptAsync(delivery.Identity, attempt);
+        delivery = delivery with { Attempt = attempt };
+        return await SendAsync(bundle, libraries, cancel) switch
+        {
+            ServerAnswer.Delivered { Existed: false } there => await OtherCopyAsync(delivery, edition, there, cancel)
+                ?? new Became.Delivered(delivery.Wanted, there.Id, await VersionAsync(there, attempt, cancel), edition.IsFinal, edition.IsRetraction),
+            ServerAnswer.Delivered or ServerAnswer.Conflict or ServerAnswer.Unknown => await recovery.LookAsync(delivery, cancel) ?? new Became.Again(null),
+            var answer => Became.Of(answer),
         };
     }
 
-    /// <summary>Time of the first start: what happened to the patient before is context.</summary>
+    /// <summary>What happened to the patient before the first start is context, unless it has been published.</summary>
+    private bool IsContext(Storage.Delivery delivery) =>
+        delivery is { Current: { } current, Revisions: 0, ServerId: null } && !options.Value.Delivery.PublishHistory && current.At < StartOf(store);
+
     private static DateTimeOffset StartOf(Store store) =>
         DateTimeOffset.Parse(store.Cursor(FirstStart.Name)!, System.Globalization.CultureInfo.InvariantCulture);
 
-    private async Task<ServerAnswer> SendAsync(ResultRenderer renderer, Outcome outcome, Edition edition, CancellationToken cancel)
+    private async Task<ServerAnswer> SendAsync(Bundle bundle, IReadOnlyList<string> libraries, CancellationToken cancel)
     {
-        var libraries = LibrariesFor(renderer, outcome);
-        var bundle = renderer.Transaction(outcome, edition, [.. libraries.Select(entry => entry.Library)]);
         var answer = await Server.TransactAsync(bundle, cancel);
         if (answer.Whole is ServerAnswer.Delivered)
         {
             lock (_lock)
             {
-                _libraries.UnionWith(libraries.Select(entry => entry.Key));
+                _libraries.UnionWith(libraries);
             }
-
-            // Nothing was written, since the result is there already; what came along would testify to an edition that never was.
-            if (answer.Entries is [ServerAnswer.Delivered { Existed: true }, ServerAnswer.Delivered surplus, ..])
-            {
-                await Server.DeleteAsync("Provenance", surplus.Id, cancel);
-            }
-
-            return answer.Entries[0];
         }
 
-        return answer.Whole;
+        // The result was not written, or was there already; what came along would testify to an edition that never was.
+        if (answer.Entries is [not ServerAnswer.Delivered { Existed: false }, ServerAnswer.Delivered stray, ..])
+        {
+            await Server.DeleteAsync("Provenance", stray.Id, cancel);
+        }
+
+        return answer.Whole is ServerAnswer.Delivered ? answer.Entries[0] : answer.Whole;
     }
 
-    private (string Key, Library Library)[] LibrariesFor(ResultRenderer renderer, Outcome outcome)
+    /// <summary>What the result's definition and policy are called, as far as they are not known to be at the server.</summary>
+    private string[] LibrariesNeeded(Outcome outcome)
     {
         lock (_lock)
         {
-            var definition = $"{outcome.Definition}|{outcome.Revision}";
-            var policy = site.Evaluator.Policies.All.FirstOrDefault(one => one.Hash == outcome.Policy);
-            return
-            [
-                .. _libraries.Contains(definition) ? [] : new[] { (definition, renderer.Definition(site.Catalogue.Find(outcome.Definition, outcome.Revision)!)) },
-                .. policy is null || _libraries.Contains(policy.Hash) ? [] : new[] { (policy.Hash, renderer.Policy(policy)) },
-            ];
+            return [.. new[] { $"{outcome.Definition}|{outcome.Revision}", outcome.Policy }.Where(key => !_libraries.Contains(key))];
         }
     }
 
-    /// <summary>Looks what the server holds of a result. Null when it holds nothing new: then the edition may be sent.</summary>
-    private async Task<Became?> LookAsync(Storage.Delivery delivery, CancellationToken cancel)
-    {
-        string id;
-        if (delivery.ServerId is { } known)
-        {
-            id = known;
-        }
-        else
-        {
-            var found = await FindAsync(delivery.Identity, cancel);
-            if (found is null)
-            {
-                return new Became.Again(null);
-            }
-
-            if (found.Count == 0)
-            {
-                return null;
-            }
-
-            id = found[0];
-        }
-
-        var answer = await Server.ReadAsync($"Observation/{id}", cancel);
-        if (!answer.Found)
-        {
-            return answer.Transient ? new Became.Again(answer.After)
-                : answer.Status is 404 or 410 ? new Became.Parked("deleted-at-server", "The result was deleted at the server.")
-                : new Became.Parked($"http-{answer.Status}", "The result cannot be read at the server.");
-        }
-
-        var judged = Judge(delivery, id, answer);
-        return judged is Became.Delivered there && !await EvidencedAsync(there.Outcome, EditionRules.Of(delivery, existed: true)!.Value.Edition, id, cancel)
-            ? new Became.Again(null)
-            : judged;
-    }
-
-    /// <summary>True when the Provenance of an edition is at the server; sent again when a transaction was carried out by half.</summary>
-    private async Task<bool> EvidencedAsync(Outcome outcome, Edition edition, string id, CancellationToken cancel)
+    private Bundle Render(Outcome outcome, Edition edition, IReadOnlyList<string> needed)
     {
         var renderer = target.Renderer;
-        try
-        {
-            if (await Server.FindProvenanceAsync($"Observation/{id}", renderer.Words.ProvenanceId, renderer.ProvenanceId(outcome, edition), cancel) is not null)
-            {
-                return true;
-            }
-
-            var provenance = renderer.Provenance(outcome, edition, $"Observation/{id}");
-            return await (provenance.Id is null ? Server.CreateAsync(provenance, null, cancel) : Server.UpdateAsync(provenance, null, cancel)) is ServerAnswer.Delivered;
-        }
-        catch (SearchFailedException)
-        {
-            return false;
-        }
+        var policy = site.Evaluator.Policies.All.FirstOrDefault(one => one.Hash == outcome.Policy);
+        return renderer.Transaction(outcome, edition,
+        [
+            .. needed.Contains($"{outcome.Definition}|{outcome.Revision}") ? [renderer.Definition(site.Catalogue.Find(outcome.Definition, outcome.Revision)!)] : Array.Empty<Library>(),
+            .. policy is not null && needed.Contains(policy.Hash) ? [renderer.Policy(policy)] : Array.Empty<Library>(),
+        ]);
     }
 
-    /// <summary>False when a conditional create raced and another result with our identifier stands; every other one is retired.</summary>
-    private async Task<bool> IsOnlyOneAsync(Guid identity, string id, CancellationToken cancel) =>
-        options.Value.Delivery.OwnIds || await FindAsync(identity, cancel) is not { Count: > 0 } found || found[0] == id;
-
-    /// <summary>The ids of the results with our identifier, duplicates retired; null when the server could not be asked.</summary>
-    private async Task<IReadOnlyList<string>?> FindAsync(Guid identity, CancellationToken cancel)
+    /// <summary>Null unless a conditional create raced, so that another copy stands or is in the way.</summary>
+    private async Task<Became?> OtherCopyAsync(Storage.Delivery delivery, Edition edition, ServerAnswer.Delivered there, CancellationToken cancel)
     {
-        try
-        {
-            var found = await Server.FindAsync("Observation", target.Renderer.Words.Result, identity.ToString(), cancel);
-            var ids = found.Select(one => one.Id).Order(StringComparer.Ordinal).ToArray();
-            foreach (var surplus in ids.Skip(1))
-            {
-                await target.RetireAsync(surplus, cancel);
-            }
-
-            return ids;
-        }
-        catch (SearchFailedException)
-        {
-            return null;
-        }
-    }
-
-    private Became? Judge(Storage.Delivery delivery, string id, ReadAnswer answer)
-    {
-        var held = HeldResult.Read(answer.Body);
-        var version = held?.Version ?? answer.ETag;
-        if (held is null || version is null)
-        {
-            return new Became.Parked(Foreign, "What the server holds under our identifier is no Observation.");
-        }
-
-        if (delivery.ServerVersion == version)
+        if (edition.PreviousVersion is not null || options.Value.Delivery.OwnIds)
         {
             return null;
         }
 
-        if (EditionRules.Of(delivery, existed: true) is var (outcome, edition)
-            && ContentDigest.Of(target.Renderer.Observation(outcome, edition)) == held.Digest)
-        {
-            return Delivered(outcome, edition, new ServerAnswer.Delivered(id, version));
-        }
-
-        // Never confirmed by the server, yet of our making: an earlier state of ours, such as after the store was lost.
-        if (delivery.ServerId is null && held.OfThisSoftware(target.Renderer.Words))
-        {
-            return new Became.Adopted(id, version, held.Status is "final" or "amended" or "corrected");
-        }
-
-        return held.Status == "entered-in-error" ? new Became.Withdrawn()
-            : new Became.Parked(Foreign, "The result was changed at the server by somebody else.");
+        var (only, hindrance) = await copies.OnlyAsync(delivery, cancel);
+        return hindrance ?? (only is not null && only != there.Id ? new Became.Again(null) : null);
     }
 
-    private static Became.Delivered Delivered(Outcome outcome, Edition edition, ServerAnswer.Delivered there) =>
-        new(outcome, there.Id, there.Version, edition.Status);
+    /// <summary>The version written; read where the answer did not tell it, and null when somebody was faster.</summary>
+    private async Task<string?> VersionAsync(ServerAnswer.Delivered there, Attempt attempt, CancellationToken cancel) =>
+        there.Version ?? (await Server.ReadAsync($"Observation/{there.Id}", cancel) is { Found: true } answer
+            && HeldResult.Read(answer) is { } held && held.Digest == attempt.Digest ? held.Version : null);
 }

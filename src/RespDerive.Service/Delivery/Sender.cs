@@ -1,14 +1,13 @@
 using System.Diagnostics.Metrics;
 using Microsoft.Extensions.Logging;
 using Microsoft.Extensions.Options;
-using RespDerive.Fhir.Writing;
 using RespDerive.Service.Operations;
 using RespDerive.Storage;
 
 namespace RespDerive.Service.Delivery;
 
 /// <summary>Brings the server to the wanted state of every result: in order per patient, several patients at once.</summary>
-internal sealed class Sender(Store store, Postman postman, IOptions<ServiceOptions> options, TimeProvider time, Feed feed, ILogger<Sender> logger) : Loop(time, logger)
+internal sealed class Sender(Store store, Target target, Postman postman, IOptions<ServiceOptions> options, TimeProvider time, Feed feed, ILogger<Sender> logger) : Loop(time, logger)
 {
     private static readonly TimeSpan Idle = TimeSpan.FromMilliseconds(250);
     private static readonly TimeSpan Off = TimeSpan.FromMinutes(1);
@@ -23,9 +22,14 @@ internal sealed class Sender(Store store, Postman postman, IOptions<ServiceOptio
         }
 
         var due = store.DueDeliveries(_time.GetUtcNow(), 200);
-        if (due.Count == 0 || !await postman.ReadyAsync(cancel))
+        if (due.Count == 0)
         {
-            return due.Count == 0 ? Idle : TimeSpan.FromSeconds(2);
+            return Idle;
+        }
+
+        if (await target.HindranceAsync(cancel) is { } hindrance)
+        {
+            return hindrance;
         }
 
         var parallel = new ParallelOptions { MaxDegreeOfParallelism = options.Value.Delivery.Parallel, CancellationToken = cancel };
@@ -41,20 +45,39 @@ internal sealed class Sender(Store store, Postman postman, IOptions<ServiceOptio
 
     private async Task SendAsync(Storage.Delivery delivery, CancellationToken cancel)
     {
-        var became = await postman.DeliverAsync(delivery, cancel);
+        Became became;
+        try
+        {
+            became = await postman.DeliverAsync(delivery, cancel);
+        }
+        catch (Exception exception) when (exception is not StoreException && !cancel.IsCancellationRequested)
+        {
+            // One result must not keep the others waiting.
+            Trouble.Report(logger, exception, $"Delivery of result {delivery.Identity} failed and is tried again");
+            became = new Became.Again(null);
+        }
+
         Sent.Add(1, new KeyValuePair<string, object?>("became", became.GetType().Name));
+        await MarkAsync(delivery, became);
+    }
+
+    private async Task MarkAsync(Storage.Delivery delivery, Became became)
+    {
         switch (became)
         {
             case Became.Nothing:
                 await store.MarkNothingToSendAsync(delivery.Identity, delivery.Wanted);
                 break;
             case Became.Delivered there:
-                await store.MarkDeliveredAsync(delivery.Identity, delivery.Wanted, there.Id, there.Version,
-                    finalSeen: there.Status is EditionStatus.Final or EditionStatus.Amended or EditionStatus.Corrected, retracted: there.Status == EditionStatus.EnteredInError);
-                feed.Delivered(there.Outcome, (int)delivery.Revisions + 1);
+                await store.MarkDeliveredAsync(delivery.Identity, there.Wanted, there.Id, there.Version, there.Final, there.Retracted);
+                if (there.Wanted == delivery.Wanted && EditionRules.Of(delivery) is var (outcome, edition))
+                {
+                    feed.Delivered(outcome, edition.Revision);
+                }
+
                 break;
             case Became.Adopted there:
-                await store.AdoptAsync(delivery.Identity, there.Id, there.Version, there.Final);
+                await store.AdoptAsync(delivery.Identity, there.Id, there.Version, there.Revision, there.Final, there.Retracted);
                 break;
             case Became.Again again:
                 var wait = again.After ?? BackOff.After(delivery.Tries, options.Value.Delivery.LongestBackOff, delivery.Identity.ToString());

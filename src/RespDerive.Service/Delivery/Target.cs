@@ -1,8 +1,8 @@
-using Hl7.Fhir.Model;
-using Hl7.Fhir.Serialization;
+using Microsoft.Extensions.Logging;
 using Microsoft.Extensions.Options;
 using RespDerive.Fhir.Server;
 using RespDerive.Fhir.Writing;
+using RespDerive.Service.Operations;
 
 namespace RespDerive.Service.Delivery;
 
@@ -12,12 +12,18 @@ internal sealed class Target
     private readonly Site _site;
     private readonly RenderOptions _options;
     private readonly bool _ownIds;
+    private readonly TimeSpan _longestBackOff;
+    private readonly ILogger _logger;
+    private bool _isReady;
+    private int _tries;
 
-    public Target(SourceServer source, Site site, IOptions<ServiceOptions> options, TimeProvider time)
+    public Target(SourceServer source, Site site, IOptions<ServiceOptions> options, TimeProvider time, ILogger<Target> logger)
     {
         _site = site;
         var delivery = options.Value.Delivery;
         _ownIds = delivery.OwnIds;
+        _longestBackOff = delivery.LongestBackOff;
+        _logger = logger;
         Server = delivery.Address is { } address ? new FhirServer(ResilientHttp.Client(delivery.Authorization), address, time) : source.Server;
         _options = new RenderOptions
         {
@@ -37,36 +43,27 @@ internal sealed class Target
 
     public ResultRenderer Renderer { get; private set; }
 
-    private bool IsReady { get; set; }
-
-    /// <summary>Makes sure our Device is there and its id is known.</summary>
-    public async Task<bool> ReadyAsync(CancellationToken cancel)
+    /// <summary>Null once our Device is there and its id is known, so that results can point at it; else how long to wait.</summary>
+    public async Task<TimeSpan?> HindranceAsync(CancellationToken cancel)
     {
-        if (!IsReady)
+        if (_isReady)
         {
-            var device = Renderer.Device();
-            var answer = _ownIds
-                ? await Server.UpdateAsync(device, null, cancel)
-                : await Server.CreateAsync(device, $"identifier={Uri.EscapeDataString(device.Identifier[0].System!)}%7C{device.Identifier[0].Value}", cancel);
-            if (answer is ServerAnswer.Delivered there)
-            {
-                Renderer = new ResultRenderer(_site.Catalogue, _options with { DeviceId = there.Id });
-                IsReady = true;
-            }
+            return null;
         }
 
-        return IsReady;
-    }
-
-    /// <summary>Marks a duplicate of a result as entered in error; it is ours, since it carries our identifier.</summary>
-    public async System.Threading.Tasks.Task RetireAsync(string id, CancellationToken cancel)
-    {
-        var answer = await Server.ReadAsync($"Observation/{id}", cancel);
-        if (answer.Found && FhirJsonDeserializer.RECOVERABLE.DeserializeResource(System.Text.Encoding.UTF8.GetString(answer.Body)) is Observation duplicate
-            && duplicate.Status != ObservationStatus.EnteredInError)
+        var device = Renderer.Device();
+        var answer = _ownIds
+            ? await Server.UpdateAsync(device, null, cancel)
+            : await Server.CreateAsync(device, $"identifier={Uri.EscapeDataString(device.Identifier[0].System!)}%7C{device.Identifier[0].Value}", cancel);
+        if (answer is ServerAnswer.Delivered there)
         {
-            duplicate.Status = ObservationStatus.EnteredInError;
-            await Server.UpdateAsync(duplicate, duplicate.Meta?.VersionId ?? answer.ETag, cancel);
+            Renderer = new ResultRenderer(_site.Catalogue, _options with { DeviceId = there.Id });
+            _isReady = true;
+            return null;
         }
+
+        var (code, text) = Became.Of(answer) is Became.Parked parked ? (parked.Code, parked.Text) : (answer.GetType().Name, "It is tried again.");
+        _logger.LogWarning("Results wait, since the server does not take our Device: {Code} {Text}", code, text);
+        return (answer as ServerAnswer.Retry)?.After ?? BackOff.After(_tries++, _longestBackOff, "Device");
     }
 }

@@ -90,7 +90,8 @@ CREATE INDEX reading_by_time ON reading (patient, kind, at);
 CREATE INDEX reading_by_resource ON reading (patient, resource);
 
 -- One row per identity ever computed, with the state of its delivery. state: 0 the anchor no longer calls, 1 a value,
--- 2 withheld. valued is the last outcome that had a value, while body has none.
+-- 2 withheld. valued is the last outcome that had a value, while body has none. since is when the wait for delivery began,
+-- recorded when the wanted edition came to be.
 CREATE TABLE outcome (
     identity   TEXT PRIMARY KEY,
     patient    INTEGER NOT NULL REFERENCES patient (id),
@@ -103,6 +104,7 @@ CREATE TABLE outcome (
     wanted     INTEGER NOT NULL,
     delivered  INTEGER NOT NULL DEFAULT 0,
     since      INTEGER NOT NULL,
+    recorded   INTEGER NOT NULL,
     revisions  INTEGER NOT NULL DEFAULT 0,
     final_seen INTEGER NOT NULL DEFAULT 0,
     retracted  INTEGER NOT NULL DEFAULT 0,
@@ -119,6 +121,15 @@ CREATE INDEX outcome_by_at ON outcome (at);
 CREATE INDEX outcome_by_state ON outcome (state, withdrawn);
 CREATE INDEX outcome_pending ON outcome (due, at) WHERE wanted <> delivered AND parked IS NULL;
 CREATE INDEX outcome_parked ON outcome (since) WHERE parked IS NOT NULL;
+
+-- Editions sent, or about to be, of which no answer is known: after a crash the server may hold them. One row per result while
+-- under way; counter is the wanted counter, evidence what testifies to the edition.
+CREATE TABLE attempt (
+    identity TEXT PRIMARY KEY,
+    counter  INTEGER NOT NULL,
+    digest   TEXT NOT NULL,
+    evidence BLOB NOT NULL
+) STRICT, WITHOUT ROWID;
 
 -- asked rises with every request, so that one that comes while a fetch is under way is not lost. missing: how often in a
 -- row the source did not find it, and since when.

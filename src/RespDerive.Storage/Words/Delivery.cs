@@ -47,6 +47,12 @@ public sealed record Delivery
     /// <summary>Since when it waits.</summary>
     public required DateTimeOffset Since { get; init; }
 
+    /// <summary>When the wanted edition came to be.</summary>
+    public required DateTimeOffset Recorded { get; init; }
+
+    /// <summary>The edition that was last sent and not confirmed, so that the server may hold it; null when none is.</summary>
+    public Attempt? Attempt { get; init; }
+
     /// <summary>Code of the refusal for good; null when not parked.</summary>
     public string? Parked { get; init; }
 
@@ -59,6 +65,12 @@ public sealed record Delivery
     /// <summary>True while the wanted edition is not at the server.</summary>
     public bool IsPending => Wanted != Delivered;
 }
+
+/// <summary>An edition under way to the server.</summary>
+/// <param name="Wanted">Its counter.</param>
+/// <param name="Digest">Digest of its content, by which it is known again.</param>
+/// <param name="Evidence">What testifies to it, as sent; opaque here.</param>
+public sealed record Attempt(long Wanted, string Digest, byte[] Evidence);
 
 /// <summary>Withheld outcomes of one definition in a row with one code.</summary>
 /// <param name="Patient">Number of the patient.</param>

@@ -117,5 +117,6 @@ internal sealed class Replay(Site site, DateTimeOffset recorded)
         Tries = 0,
         Due = recorded,
         Since = recorded,
+        Recorded = recorded,
     };
 }

@@ -94,15 +94,20 @@ public sealed class SearchTests : IDisposable
     }
 
     [Fact]
-    public async Task A_Provenance_already_there_is_found_by_our_id_of_it()
+    public async Task Our_own_Provenances_are_told_from_those_of_others()
     {
-        const string url = "https://r.example/provenance-id";
+        var words = new RespDerive.Fhir.Writing.Vocabulary("https://r.example");
+        var ours = $$$"""
+            {"url":"{{{words.ProvenanceId}}}","valueString":"one"},{"url":"{{{words.ContentDigest}}}","valueString":"abc"}
+            """;
         _peer.Answer("GET", "/fhir/Provenance", 200, Peer.Searchset($$$"""
-            {"resource":{"resourceType":"Provenance","id":"p1","extension":[{"url":"{{{url}}}","valueString":"urn:uuid:1"}]}},
-            {"resource":{"resourceType":"Provenance","id":"p2","extension":[{"url":"other","valueString":"urn:uuid:2"},{"url":"{{{url}}}","valueString":"urn:uuid:2"}]}}
+            {"resource":{"resourceType":"Provenance","id":"theirs","extension":[{"url":"other","valueString":"one"}]}},
+            {"resource":{"resourceType":"Provenance","id":"p1","extension":[{{{ours}}}],
+             "target":[{"reference":"Observation/1","extension":[{"url":"other"},{"url":"{{{words.ResultRevision}}}","valuePositiveInt":3}]}]}},
+            {"resource":{"resourceType":"Provenance","id":"p2","extension":[{{{ours}}}]}}
             """));
-        Assert.Equal("p2", (await _peer.Fhir.FindProvenanceAsync("Observation/1", url, "urn:uuid:2", TestContext.Current.CancellationToken))?.Id);
-        Assert.Null(await _peer.Fhir.FindProvenanceAsync("Observation/1", url, "urn:uuid:3", TestContext.Current.CancellationToken));
+        Assert.Equal([new("p1", "one", "abc", 3), new("p2", "one", "abc", 0)],
+            await _peer.Fhir.OwnProvenancesAsync("Observation/1", words, TestContext.Current.CancellationToken));
         Assert.Equal("Observation/1", _peer.Requests.First().Query!["target"][0]);
     }
 }
