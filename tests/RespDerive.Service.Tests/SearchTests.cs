@@ -30,7 +30,7 @@ public sealed class SearchTests
             return OddServer.Json(200, OddServer.Page([Changed(Some.Gas("gas", "p", 80, Drawn), Drawn)]));
         });
         await using var alone = await Alone.StartAsync(server, Often, ("Intake:Criteria:0", "DeviceMetric?"), ("Intake:Criteria:1", "Observation?"));
-        await Until.True(() => alone.Store.Counts().Received == 1 && Volatile.Read(ref read) >= 10, "the other criterion");
+        await Until.True(() => alone.Store.Counts().Readings == 1 && Volatile.Read(ref read) >= 10, "the other criterion");
         Assert.InRange(Volatile.Read(ref refused), 1, Volatile.Read(ref read) - 1);
         Assert.False((bool)JsonNode.Parse(await alone.ReadyAsync())!["read"]!);
         Assert.Contains("Poller failed to read {Type}", CapturedLogs.Text, StringComparison.Ordinal);
@@ -45,13 +45,13 @@ public sealed class SearchTests
         var held = new List<JsonObject> { Changed(Some.Gas("ahead", "p", 70, Drawn), TimeProvider.System.GetUtcNow().AddYears(20)) };
         server.On("GET", "/fhir/Observation", request => Answer(request, held));
         await using var alone = await Alone.StartAsync(server, Often);
-        await Until.True(() => alone.Store.Counts().Received == 1 && alone.Store.Cursor("search:Observation?") is not null, "the one ahead");
+        await Until.True(() => alone.Store.Counts().Readings == 1 && alone.Store.Cursor("search:Observation?") is not null, "the one ahead");
         lock (held)
         {
             held.Add(Changed(Some.Gas("gas", "p", 80, Drawn), TimeProvider.System.GetUtcNow()));
         }
 
-        await Until.True(() => alone.Store.Counts().Received == 2, "the one of now");
+        await Until.True(() => alone.Store.Counts().Readings == 2, "the one of now");
     }
 
     [Fact]
@@ -63,7 +63,7 @@ public sealed class SearchTests
         List<JsonObject> held = [.. Enumerable.Range(0, 11).Select(i => Changed(Some.Gas($"gas{i}", "p", 60 + i, Drawn), imported)), Changed(Some.Gas("after", "p", 90, Drawn), imported.AddMinutes(4))];
         server.On("GET", "/fhir/Observation", request => Answer(request, held));
         await using var alone = await Alone.StartAsync(server, ("Intake:PageSize", "4"));
-        await Until.True(() => alone.Store.Counts().Received == held.Count, "everything");
+        await Until.True(() => alone.Store.Counts().Readings == held.Count, "everything");
         Assert.True(counted.Sum > 0);
     }
 

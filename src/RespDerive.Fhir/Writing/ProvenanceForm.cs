@@ -55,7 +55,7 @@ internal sealed class ProvenanceForm(RenderOptions options, Vocabulary words, Re
     }
 
     /// <summary>Id of the Provenance of one edition: the same content recorded again has the same id.</summary>
-    public static Guid Id(Outcome outcome, Edition edition, string digest) =>
+    private static Guid Id(Outcome outcome, Edition edition, string digest) =>
         NameBasedUuid.Of(outcome.Identity, "provenance", edition.Revision.ToString(CultureInfo.InvariantCulture), digest);
 
     private static CodeableConcept Activity(Edition edition) => edition switch

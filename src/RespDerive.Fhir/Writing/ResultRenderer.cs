@@ -44,10 +44,6 @@ public sealed class ResultRenderer
     public Provenance Provenance(Outcome outcome, Edition edition, string targetReference) =>
         Provenance(outcome, edition, targetReference, Observation(outcome, edition));
 
-    /// <summary>Our id of the Provenance of one edition: a resend looks for it among those of the target.</summary>
-    public string ProvenanceId(Outcome outcome, Edition edition) =>
-        ProvenanceForm.Id(outcome, edition, ContentDigest.Of(Observation(outcome, edition))).ToString();
-
     /// <summary>Our Device: one for each software version.</summary>
     public Device Device() => _artefacts.Device();
 

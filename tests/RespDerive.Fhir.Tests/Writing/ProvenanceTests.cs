@@ -106,10 +106,6 @@ public sealed class ProvenanceTests
     }
 
     [Fact]
-    public void A_resend_can_look_for_the_id() =>
-        Assert.Equal(Samples.Renderer().ProvenanceId(Samples.PfRatio, Samples.First), ((FhirString)Rendered(Samples.PfRatio).GetExtension(Words.ProvenanceId)!.Value!).Value);
-
-    [Fact]
     public void With_our_own_ids_the_id_is_the_resource_id()
     {
         var provenance = Rendered(Samples.PfRatio, null, options => options with { UsePutIds = true });
