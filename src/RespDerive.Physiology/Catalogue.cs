@@ -26,6 +26,7 @@ public sealed class Catalogue
             }
         }
 
+        Revisions = [.. _all.Values.OrderBy(definition => definition.Key, StringComparer.Ordinal).ThenBy(definition => definition.Revision)];
         All = [.. _current.Values.OrderBy(definition => definition.Key, StringComparer.Ordinal)];
     }
 
@@ -34,6 +35,9 @@ public sealed class Catalogue
 
     /// <summary>Current revision of each definition, ordered by key.</summary>
     public IReadOnlyList<Definition> All { get; }
+
+    /// <summary>Every revision of each definition, frozen ones too, ordered by key and revision.</summary>
+    public IReadOnlyList<Definition> Revisions { get; }
 
     /// <summary>A definition by key or alias; null when there is none.</summary>
     public Definition? Find(string key) =>

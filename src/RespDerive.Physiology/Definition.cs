@@ -8,6 +8,8 @@ namespace RespDerive.Physiology;
 /// </summary>
 public abstract class Definition
 {
+    private Plan? _plan;
+
     /// <summary>The value as a kind: key, symbol, name, unit, hard limits, needs and formula.</summary>
     public abstract Kind Result { get; }
 
@@ -20,6 +22,12 @@ public abstract class Definition
     /// <summary>Rises whenever the number changes; the old one stays beside it, frozen.</summary>
     public virtual int Revision => 1;
 
+    /// <summary>False for lesser variants and bands: a site must ask for them.</summary>
+    public virtual bool OnByDefault => true;
+
+    /// <summary>True for targets, predictions and model rates: computed when asked, never published.</summary>
+    public virtual bool ByHandOnly => false;
+
     /// <summary>Heading under which the catalogue lists it.</summary>
     public abstract string Purpose { get; }
 
@@ -28,6 +36,9 @@ public abstract class Definition
 
     /// <summary>The equation as implemented, symbols as in the inputs.</summary>
     public abstract string Equation { get; }
+
+    /// <summary>The equation in LaTeX, for one that is no simple algebra; null leaves it to be made from <see cref="Equation"/>.</summary>
+    public virtual string? EquationInLatex => null;
 
     /// <summary>Assumptions and range of validity.</summary>
     public abstract string Assumptions { get; }
@@ -53,6 +64,9 @@ public abstract class Definition
     /// <summary>Conditions that are published with it.</summary>
     public virtual IReadOnlyList<FlagRule> FlagRules => [];
 
+    /// <summary>Pressures of one breath, so of one transducer: where a root says nothing else, they share its zero offset.</summary>
+    public virtual IReadOnlyList<Kind> OneTransducer => [];
+
     /// <summary>Withheld above this relative standard uncertainty; null when the definition does not say so.</summary>
     public virtual double? GreatestRelativeUncertainty => null;
 
@@ -68,10 +82,9 @@ public abstract class Definition
     /// <summary>Symbols that mean another kind here than in the general vocabulary.</summary>
     public virtual IReadOnlyDictionary<string, Kind> Symbols => System.Collections.Immutable.ImmutableDictionary<string, Kind>.Empty;
 
-    /// <summary>The slots by which the value can be had from these roots: its own, else those of the identity.</summary>
-    internal IReadOnlyList<Slot> Path(Roots roots) =>
-        ByIdentity.Count > 0 && !Result.Needs.All(roots.Has) && ByIdentity.All(roots.Has) ? ByIdentity : Result.Needs;
-
     /// <summary>Kinds that only gates and flag rules look at.</summary>
-    public IEnumerable<Kind> Watched => Gates.SelectMany(gate => gate.Reads).Concat(FlagRules.SelectMany(rule => rule.Reads)).Distinct();
+    public IEnumerable<Kind> Watched => Plan.Watched;
+
+    /// <summary>What an evaluation looks up.</summary>
+    internal Plan Plan => _plan ??= new Plan(this);
 }

@@ -17,6 +17,18 @@ public sealed class CatalogueCommandTests
         Assert.Matches(@"Oxygenation\n(  .*\n)*  pf-ratio +mm\[Hg\] +LOINC 50984-4 +needs PaO2, FiO2\n", output);
     }
 
+    [Fact]
+    public async Task The_list_marks_what_does_not_run_by_itself()
+    {
+        var (_, output, _) = await Cli.RunAsync("catalogue");
+        foreach (var definition in Catalogue.Shipped.All)
+        {
+            var line = Assert.Single(output.Split('\n'), line => line.StartsWith($"  {definition.Key} ", StringComparison.Ordinal));
+            Assert.Equal(definition.ByHandOnly, line.EndsWith(" (by hand only)", StringComparison.Ordinal));
+            Assert.Equal(!definition.OnByDefault && !definition.ByHandOnly, line.EndsWith(" (off by default)", StringComparison.Ordinal));
+        }
+    }
+
     [Theory]
     [MemberData(nameof(Keys))]
     public async Task One_definition_is_shown_with_everything(string key)

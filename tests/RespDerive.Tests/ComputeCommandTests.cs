@@ -60,6 +60,17 @@ public sealed class ComputeCommandTests
         Assert.Null(answer["uncertainty"]);
     }
 
+    [Fact]
+    public async Task Without_inputs_it_says_what_is_needed()
+    {
+        var (code, output, _) = await Cli.RunAsync("compute", "elastance");
+        Assert.Equal(Exit.Findings, code);
+        Assert.Matches(@"Cstat +static compliance .* given, or computed\n", output);
+        Assert.Matches(@"Pplat +plateau pressure +plateau-pressure +3 to 100 cm\[H2O\]", output);
+        Assert.Contains("respderive compute elastance \"Cstat=40 mL/cm[H2O]\"", output, StringComparison.Ordinal);
+        Assert.Equal("input-missing", (string)JsonNode.Parse((await Cli.RunAsync("compute", "pf-ratio", "-o", "json")).Output)!["withheld"]!["code"]!);
+    }
+
     [Theory]
     [InlineData("PAO2, PaO2, pao2", "compute", "pf-ratio", "Pa02=90", "fio2=0.4")]
     [InlineData("pf-ratio", "compute", "pf-ration", "pao2=90")]
@@ -125,6 +136,31 @@ public sealed class ComputeCommandTests
         var inputs = JsonNode.Parse(output.ToString())!["inputs"]!.AsObject();
         Assert.True((double)inputs["zero-offset:a"]!["share"]! > 0.5);
         Assert.Equal(1, inputs.Sum(input => (double)input.Value!["share"]!), 1e-9);
+    }
+
+    [Fact]
+    public async Task A_coded_result_has_a_code_with_its_text_and_the_probability_of_each_band()
+    {
+        var (code, output, _) = await Cli.RunAsync("compute", "ards-oxygenation-band", "PF=205", "PEEP=8", "PB=760", "-o", "json");
+        var answer = JsonNode.Parse(output)!.AsObject();
+        Assert.Equal(Exit.Ok, code);
+        Assert.Equal("mild", (string)answer["value"]!["code"]!);
+        Assert.Equal("Oxygenation criterion: mild band", (string)answer["value"]!["text"]!);
+        Assert.All(["published", "unit", "uncertainty", "withheld"], member => Assert.Null(answer[member]));
+        Assert.Equal(["severe", "moderate", "mild", "none"], answer["bands"]!.AsArray().Select(band => (string)band!["code"]!));
+
+        var text = (await Cli.RunAsync("compute", "ards-oxygenation-band", "PF=205", "PEEP=8", "PB=760")).Output;
+        Assert.Contains("by berlin-2012 from PF = 205 mm[Hg] ± 14 mm[Hg]", text, StringComparison.Ordinal);
+        Assert.Contains("probability: moderate 38 %, mild 62 %", text, StringComparison.Ordinal);
+    }
+
+    [Fact]
+    public async Task A_withheld_band_has_no_bands()
+    {
+        var answer = JsonNode.Parse((await Cli.RunAsync("compute", "ards-oxygenation-band", "PF=205", "PEEP=3", "-o", "json")).Output)!.AsObject();
+        Assert.Equal("peep-below-minimum", (string)answer["withheld"]!["code"]!);
+        Assert.Null(answer["value"]);
+        Assert.False(answer.ContainsKey("bands"));
     }
 
     [Fact]

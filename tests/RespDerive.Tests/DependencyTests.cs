@@ -34,7 +34,7 @@ public sealed class DependencyTests
     [Fact]
     public void No_source_file_is_longer_than_four_hundred_lines()
     {
-        var files = Directory.EnumerateFiles(Path.Combine(Root(), "src"), "*.cs", SearchOption.AllDirectories)
+        var files = Directory.EnumerateFiles(Repository.PathOf("src"), "*.cs", SearchOption.AllDirectories)
             .Where(file => !file.Split(Path.DirectorySeparatorChar).Any(part => part is "bin" or "obj")).ToArray();
         Assert.NotEmpty(files);
         Assert.All(files, file => Assert.True(File.ReadLines(file).Count() <= LongestFile, file));
@@ -45,15 +45,4 @@ public sealed class DependencyTests
 
     private static bool IsPlatform(string name) =>
         name.StartsWith("System.", StringComparison.Ordinal) && File.Exists(Path.Combine(Path.GetDirectoryName(typeof(object).Assembly.Location)!, name + ".dll"));
-
-    private static string Root()
-    {
-        var folder = new DirectoryInfo(AppContext.BaseDirectory);
-        while (!File.Exists(Path.Combine(folder.FullName, "RespDerive.sln")))
-        {
-            folder = folder.Parent ?? throw new InvalidOperationException("RespDerive.sln not found above the tests.");
-        }
-
-        return folder.FullName;
-    }
 }

@@ -38,7 +38,7 @@ public sealed class ConfluenceTests
         var slice = new Slice(winners.SelectMany(version => version.Readings), Person(winners));
         var store = new InMemoryHistory();
         store.Apply(new TurnChanges { Readings = [.. winners.SelectMany(version => version.Readings)] });
-        foreach (var definition in Catalogue.Shipped.All)
+        foreach (var definition in Evaluator.Called)
         {
             foreach (var outcome in Evaluator.Evaluate(definition, slice, DateTimeOffset.MinValue, DateTimeOffset.MaxValue))
             {

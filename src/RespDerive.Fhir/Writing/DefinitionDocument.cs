@@ -35,6 +35,19 @@ public static class DefinitionDocument
             ["codes"] = Array(definition.Codes.Select(code => (JsonNode?)new JsonObject { ["system"] = code.System, ["code"] = code.Code, ["display"] = code.Display })),
             ["sources"] = Array(definition.Citations.Select(citation => (JsonNode?)new JsonObject { ["text"] = citation.Text, ["doi"] = citation.Doi })),
         };
+        if (definition is Classification classification)
+        {
+            document["bands"] = Array(definition.Result.Codes.Select(code => (JsonNode?)new JsonObject { ["code"] = code, ["text"] = classification.Text(code) }));
+            document["criteria"] = Array(classification.Criteria.Select(criterion => (JsonNode?)new JsonObject
+            {
+                ["name"] = criterion.Name,
+                ["number"] = criterion.Number.Key,
+                ["codes"] = Array(criterion.Codes.Select(code => (JsonNode?)code)),
+                ["cuts"] = Array(criterion.Cuts.Select(cut => (JsonNode?)cut)),
+                ["cutIsBelow"] = criterion.CutIsBelow,
+            }));
+        }
+
         return CanonicalJson.Of(JsonSerializer.SerializeToElement(document));
     }
 

@@ -51,8 +51,8 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
     }
 
     /// <summary>A coded value of a kind.</summary>
-    public CodeableConcept Coded(string kind, string code) =>
-        new() { Coding = [new Coding(words.CodedValue, $"{kind}.{code.Replace(' ', '-')}", code)], Text = code };
+    public CodeableConcept Coded(string kind, string code, string? text = null) =>
+        new() { Coding = [new Coding(words.CodedValue, $"{kind}.{code.Replace(' ', '-')}", text ?? code)], Text = text ?? code };
 
     private static ObservationStatus Status(EditionStatus status) => status switch
     {
@@ -110,7 +110,7 @@ internal sealed class ObservationForm(Catalogue catalogue, RenderOptions options
     {
         if (outcome.Code is { } code)
         {
-            return Coded(definition.Key, code);
+            return Coded(definition.Key, code, (definition as Classification)?.Text(code));
         }
 
         var published = outcome.Published ?? throw new ArgumentException("A withheld outcome has no value to publish.", nameof(outcome));

@@ -135,6 +135,10 @@ internal sealed class PolicyReader(Catalogue catalogue, List<string> errors)
             {
                 errors.Add($"{place}[{i}]: no such definition");
             }
+            else if (definition.ByHandOnly)
+            {
+                errors.Add($"{place}[{i}]: {definition.Key} is computed by hand only and never published");
+            }
             else if (!keys.Contains(definition.Key, StringComparer.Ordinal))
             {
                 keys.Add(definition.Key);

@@ -30,6 +30,9 @@ public sealed class PredictedBodyWeight : Definition
     public override string Equation => "PBW = 50 (male) or 45.5 (female) + 0.91·(height − 152.4)";
 
     /// <inheritdoc/>
+    public override string EquationInLatex => @"\mathrm{PBW} = \begin{cases} 50 & \text{male} \\ 45.5 & \text{female} \end{cases} + 0.91\cdot(\mathrm{height} - 152.4)";
+
+    /// <inheritdoc/>
     public override string Assumptions => "Adults of 140 to 210 cm. The sex is the one the formula was made for, sex at birth. Not valid in children.";
 
     /// <inheritdoc/>

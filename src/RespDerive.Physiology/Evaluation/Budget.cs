@@ -21,15 +21,27 @@ public static class Budget
     public static (double Standard, IReadOnlyList<Share> Shares) Of(Roots roots, Func<Roots, double> function)
     {
         var parts = new List<Share>();
+        return (Standard(roots, function, parts), parts);
+    }
+
+    /// <summary>Standard uncertainty; the share of each root is put into <paramref name="parts"/>, which is emptied first.</summary>
+    internal static double Standard(Roots roots, Func<Roots, double> function, List<Share> parts)
+    {
+        parts.Clear();
         var variance = Variances(roots, function, parts);
-        return (Math.Sqrt(variance), variance > 0 ? [.. parts.Select(part => part with { Fraction = part.Fraction / variance })] : []);
+        for (var i = 0; i < parts.Count; i++)
+        {
+            parts[i] = parts[i] with { Fraction = parts[i].Fraction / variance };
+        }
+
+        return Math.Sqrt(variance);
     }
 
     private static double Variances(Roots roots, Func<Roots, double> function, List<Share>? parts)
     {
         var total = 0.0;
-        var all = roots.All;
-        for (var i = 0; i < all.Count; i++)
+        var all = roots.Span;
+        for (var i = 0; i < all.Length; i++)
         {
             var root = all[i];
             if (root.Kind.IsCoded)
@@ -39,11 +51,10 @@ public static class Budget
 
             var shared = SharesOffset(all, i);
             var own = shared ? root.Spread.Independent(root.Value) : root.Spread.Standard(root.Value);
-            total += Add(Squared(roots, function, own, [i]), root.Kind, null, parts);
+            total += Add(Alone(roots, function, own, i), root.Kind, null, parts);
             if (shared && IsFirst(all, i))
             {
-                var together = Enumerable.Range(0, all.Count).Where(j => all[j].Transducer == root.Transducer && all[j].Spread.Zero).ToArray();
-                total += Add(Squared(roots, function, root.Spread.Offset, together), root.Kind, root.Transducer, parts);
+                total += Add(Together(roots, function, root.Spread.Offset, i), root.Kind, root.Transducer, parts);
             }
         }
 
@@ -60,50 +71,66 @@ public static class Budget
         return variance;
     }
 
-    private static double Squared(Roots roots, Func<Roots, double> function, double standard, ReadOnlySpan<int> moved)
+    /// <summary>Variance from one root.</summary>
+    private static double Alone(Roots roots, Func<Roots, double> function, double standard, int moved)
     {
         if (standard <= 0)
         {
             return 0;
         }
 
-        Span<double> kept = stackalloc double[moved.Length];
-        for (var i = 0; i < moved.Length; i++)
+        roots.Move(moved, Step * standard);
+        var above = function(roots);
+        roots.Move(moved, -Step * standard);
+        var below = function(roots);
+        roots.Move(moved, 0);
+        return Squared(above - below);
+    }
+
+    /// <summary>Variance from the offset of the transducer of one root, moving all its roots at once.</summary>
+    private static double Together(Roots roots, Func<Roots, double> function, double standard, int first)
+    {
+        if (standard <= 0)
         {
-            kept[i] = roots.All[moved[i]].Value;
+            return 0;
         }
 
-        var above = Moved(roots, function, moved, kept, Step * standard);
-        var below = Moved(roots, function, moved, kept, -Step * standard);
-        for (var i = 0; i < moved.Length; i++)
-        {
-            roots.Restore(moved[i], kept[i]);
-        }
+        MoveAll(roots, first, Step * standard);
+        var above = function(roots);
+        MoveAll(roots, first, -Step * standard);
+        var below = function(roots);
+        MoveAll(roots, first, 0);
+        return Squared(above - below);
+    }
 
-        var contribution = (above - below) / (2 * Step);
+    private static double Squared(double difference)
+    {
+        var contribution = difference / (2 * Step);
         return contribution * contribution;
     }
 
-    private static double Moved(Roots roots, Func<Roots, double> function, ReadOnlySpan<int> moved, ReadOnlySpan<double> from, double by)
+    private static void MoveAll(Roots roots, int first, double by)
     {
-        for (var i = 0; i < moved.Length; i++)
+        var all = roots.Span;
+        for (var i = first; i < all.Length; i++)
         {
-            roots.Restore(moved[i], from[i] + by);
+            if (SameOffset(all[i], all[first]))
+            {
+                roots.Move(i, by);
+            }
         }
-
-        return function(roots);
     }
 
-    private static bool SharesOffset(IReadOnlyList<Root> all, int i)
+    private static bool SharesOffset(ReadOnlySpan<Root> all, int i)
     {
         if (all[i].Transducer is null || !all[i].Spread.Zero)
         {
             return false;
         }
 
-        for (var j = 0; j < all.Count; j++)
+        for (var j = 0; j < all.Length; j++)
         {
-            if (j != i && all[j].Transducer == all[i].Transducer && all[j].Spread.Zero)
+            if (j != i && SameOffset(all[j], all[i]))
             {
                 return true;
             }
@@ -112,11 +139,11 @@ public static class Budget
         return false;
     }
 
-    private static bool IsFirst(IReadOnlyList<Root> all, int i)
+    private static bool IsFirst(ReadOnlySpan<Root> all, int i)
     {
         for (var j = 0; j < i; j++)
         {
-            if (all[j].Transducer == all[i].Transducer && all[j].Spread.Zero)
+            if (SameOffset(all[j], all[i]))
             {
                 return false;
             }
@@ -124,4 +151,6 @@ public static class Budget
 
         return true;
     }
+
+    private static bool SameOffset(in Root a, in Root b) => a.Transducer == b.Transducer && a.Spread.Zero;
 }

@@ -102,7 +102,8 @@ public sealed record ByHand(Definition Definition, Computation Computation, IRea
         foreach (var slot in Chain.Slots(definition))
         {
             var given = slot.Kinds.FirstOrDefault(roots.Has);
-            var computable = slot.Kinds.FirstOrDefault(kind => kind.Formula is not null && kind.ComputableFrom(complete));
+            var computable = slot.Kinds.Where(kind => !slot.Alternatives || roots.Has(kind)).FirstOrDefault(kind => kind.Formula is not null && kind.ComputableFrom(complete));
+            given = slot.Alternatives ? computable : given;
             if (given is not null && computable is not null)
             {
                 throw new UnusableRequestException($"{given.Name} ({named[given].Given.Name}) is given and can be computed from other values given; leave one of them out.");
@@ -116,6 +117,6 @@ public sealed record ByHand(Definition Definition, Computation Computation, IRea
 
     /// <summary>Kinds the formula rests on: the chain when it is complete, anything it could use when it is not.</summary>
     private static HashSet<Kind> Needed(Definition definition, Roots roots, Computation computation) => computation.Missing.Count == 0
-        ? [.. Chain.Steps(definition.Path(roots), roots).Select(step => step.Kind)]
+        ? [.. Chain.Steps(definition.Plan.Path(roots), roots).Select(step => step.Kind)]
         : [.. Chain.Slots(definition).SelectMany(slot => slot.Kinds)];
 }

@@ -11,7 +11,7 @@ internal static class Chain
     /// <summary>Every step that is taken for these slots; slots that cannot be filled are passed over.</summary>
     public static IEnumerable<Step> Steps(IReadOnlyList<Slot> needs, Roots roots)
     {
-        foreach (var option in needs.Select(slot => slot.Chosen(roots)).OfType<Option>())
+        foreach (var option in needs.Select(roots.Chosen).OfType<Option>())
         {
             foreach (var kind in option.Terms.Select(term => term.Present(roots)).OfType<Kind>())
             {
@@ -28,8 +28,8 @@ internal static class Chain
     }
 
     /// <summary>Every slot a definition could ever use, its own first, then those of the definitions it rests on.</summary>
-    public static IEnumerable<Slot> Slots(Definition definition) => Slots(definition.Result.Needs.Concat(definition.ByIdentity));
+    public static IEnumerable<Slot> Slots(Definition definition) => definition.Plan.Chain;
 
-    private static IEnumerable<Slot> Slots(IEnumerable<Slot> slots) =>
+    internal static IEnumerable<Slot> Slots(IEnumerable<Slot> slots) =>
         slots.SelectMany(slot => slot.Kinds.SelectMany(kind => Slots(kind.Needs)).Prepend(slot)).Distinct();
 }

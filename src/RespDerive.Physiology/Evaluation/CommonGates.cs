@@ -69,19 +69,12 @@ public static class CommonGates
             || (x.Has(Kinds.PeepLowered) && x[Kinds.PeepLowered] < 15)
             || (x.Has(Kinds.PeepRaised) && x[Kinds.PeepRaised] < 60));
 
-    private static bool ExceedsAlveolar(Roots x)
+    private static bool ExceedsAlveolar(Roots x) =>
+        x.Has(Slots.PaO2) && x.Has(Slots.FiO2) && Excess(x) is > 0 and var excess && excess > K * Budget.Standard(x, Excess);
+
+    private static double Excess(Roots x)
     {
-        if (!x.Has(Slots.PaO2) || !x.Has(Slots.FiO2))
-        {
-            return false;
-        }
-
-        double Excess(Roots r)
-        {
-            var pressure = r.Has(Kinds.BarometricPressure) ? r[Kinds.BarometricPressure] : HighestPressure;
-            return r[Slots.PaO2] - ((r[Slots.FiO2] * (pressure - 47)) - (r.Has(Kinds.PaCO2) ? r[Kinds.PaCO2] : 0));
-        }
-
-        return Excess(x) > K * Budget.Standard(x, Excess);
+        var pressure = x.Has(Kinds.BarometricPressure) ? x[Kinds.BarometricPressure] : HighestPressure;
+        return x[Slots.PaO2] - ((x[Slots.FiO2] * (pressure - 47)) - (x.Has(Kinds.PaCO2) ? x[Kinds.PaCO2] : 0));
     }
 }

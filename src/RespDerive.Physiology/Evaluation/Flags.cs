@@ -19,6 +19,14 @@ public static class Flags
     public const string OrderUnknown = "order-unknown";
     public const string SpecimenUnread = "specimen-unread";
     public const string OtherDevice = "other-device";
+    public const string DyshemoglobinUnknown = "dyshaemoglobin-unknown";
+    public const string VenousTensionAssumed = "venous-tension-assumed";
+    public const string SupportUnconfirmed = "support-unconfirmed";
+    public const string AltitudeUnknown = "altitude-unknown";
+    public const string BandUncertain = "band-uncertain";
+    public const string ModeUnconfirmed = "mode-unconfirmed";
+    public const string OnPressureSupport = "on-pressure-support";
+    public const string CorrectionUnstated = "correction-unstated";
 #pragma warning restore CS1591
 
     private static readonly Dictionary<string, string> Lines = new(StringComparer.Ordinal)
@@ -37,7 +45,15 @@ public static class Flags
         [Spo2Above97] = "SpO2 above 97 %: the ratio says little about oxygenation.",
         [OrderUnknown] = "The source gave neither version nor time of change; arrival order decided.",
         [SpecimenUnread] = "The specimen named by the source could not be read.",
+        [CorrectionUnstated] = "Nothing says whether the analyser already corrected the gas to the patient's temperature; it must not be corrected twice.",
         [OtherDevice] = "The inputs come from different devices.",
+        [DyshemoglobinUnknown] = "Carboxy- and methaemoglobin were not measured and are taken as none.",
+        [VenousTensionAssumed] = "The mixed venous oxygen tension was not measured; its small part of the content is assumed.",
+        [SupportUnconfirmed] = "The kind of respiratory support was taken on trust.",
+        [AltitudeUnknown] = "The barometric pressure is not known, so there is no correction for altitude.",
+        [BandUncertain] = "A cut-point lies within two standard uncertainties: a neighbouring band is possible.",
+        [ModeUnconfirmed] = "The ventilation mode was taken on trust to be the one the formula is made for.",
+        [OnPressureSupport] = "Pressure support was set: the index reads lower than in unsupported breathing.",
     };
 
     /// <summary>All flags with their line.</summary>

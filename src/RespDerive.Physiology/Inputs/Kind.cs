@@ -28,6 +28,8 @@ public enum Origin
 /// <summary>One sort of value a formula can use: a quantity in its canonical UCUM unit, or a coded value.</summary>
 public sealed class Kind
 {
+    private static int _last = -1;
+
     private Kind(string key, string symbol, string name, Origin origin)
     {
         (Key, Symbol, Name, Origin) = (key, symbol, name, origin);
@@ -44,6 +46,9 @@ public sealed class Kind
 
     /// <summary>Where it comes from.</summary>
     public Origin Origin { get; }
+
+    /// <summary>Place in tables by kind.</summary>
+    internal int Number { get; } = Interlocked.Increment(ref _last);
 
     /// <summary>Canonical UCUM unit; null for a coded kind.</summary>
     public string? Unit { get; private init; }
@@ -91,6 +96,10 @@ public sealed class Kind
     public static Kind Coded(string key, string symbol, string name, Origin origin, params string[] codes) =>
         new(key, symbol, name, origin) { Codes = codes };
 
+    /// <summary>A coded kind with a single code that is assumed when nothing better is given.</summary>
+    public static Kind Taken(string key, string symbol, string name, Origin origin, string code) =>
+        new(key, symbol, name, origin) { Codes = [code], Assumed = 0 };
+
     /// <summary>The result of a definition, usable as an input of others.</summary>
     public static Kind Derived(string key, string symbol, string name, string unit, double least, double greatest, Tolerance given,
         IReadOnlyList<Slot> needs, Func<Roots, double> formula) => new(key, symbol, name, Origin.Derived)
@@ -104,24 +113,12 @@ public sealed class Kind
             Needs = needs,
         };
 
+    /// <summary>The coded result of a definition; the formula gives the index of the code.</summary>
+    public static Kind Classified(string key, string symbol, string name, IReadOnlyList<string> codes, IReadOnlyList<Slot> needs, Func<Roots, double> formula) =>
+        new(key, symbol, name, Origin.Derived) { Codes = codes, RangeCode = Withheld.Impossible, Formula = formula, Needs = needs };
+
     /// <summary>True when the formula of this kind has all it needs.</summary>
-    internal bool ComputableFrom(Roots roots)
-    {
-        if (Formula is null)
-        {
-            return false;
-        }
-
-        foreach (var slot in Needs)
-        {
-            if (!roots.Has(slot))
-            {
-                return false;
-            }
-        }
-
-        return true;
-    }
+    internal bool ComputableFrom(Roots roots) => Formula is not null && roots.HasAll(Needs);
 
     /// <inheritdoc/>
     public override string ToString() => Key;

@@ -10,20 +10,20 @@ public sealed record Term(IReadOnlyList<Kind> AnyOf, Pairing Pairing)
 
     internal Kind? Present(Roots roots)
     {
-        foreach (var kind in AnyOf)
+        for (var i = 0; i < AnyOf.Count; i++)
         {
-            if (roots.Has(kind))
+            if (roots.Has(AnyOf[i]))
             {
-                return kind;
+                return AnyOf[i];
             }
         }
 
         // A result of another definition counts as present when that definition can be computed from the roots.
-        foreach (var kind in AnyOf)
+        for (var i = 0; i < AnyOf.Count; i++)
         {
-            if (kind.ComputableFrom(roots))
+            if (AnyOf[i].ComputableFrom(roots))
             {
-                return kind;
+                return AnyOf[i];
             }
         }
 
@@ -45,9 +45,9 @@ public sealed record Option(IReadOnlyList<Term> Terms, string? Flag = null, stri
     internal double Sum(Roots roots)
     {
         var sum = 0.0;
-        foreach (var term in Terms)
+        for (var i = 0; i < Terms.Count; i++)
         {
-            sum += roots[term.Present(roots)!];
+            sum += roots[Terms[i].Present(roots)!];
         }
 
         return sum;
@@ -55,9 +55,9 @@ public sealed record Option(IReadOnlyList<Term> Terms, string? Flag = null, stri
 
     internal bool Complete(Roots roots)
     {
-        foreach (var term in Terms)
+        for (var i = 0; i < Terms.Count; i++)
         {
-            if (term.Present(roots) is null)
+            if (Terms[i].Present(roots) is null)
             {
                 return false;
             }
@@ -73,24 +73,67 @@ public sealed record Option(IReadOnlyList<Term> Terms, string? Flag = null, stri
 /// <param name="Missing">Withheld code when none can be filled.</param>
 public sealed record Slot(string Name, IReadOnlyList<Option> Options, string Missing = Withheld.InputMissing)
 {
+    private static readonly Lock Numbering = new();
+    private static int _last = -1;
+    private Slot? _numbered;
+    private int _number;
+
     /// <summary>A slot with a single option.</summary>
     public Slot(Kind kind, Pairing pairing, string missing = Withheld.InputMissing) : this(kind.Name, [new Option(kind, pairing)], missing)
     {
     }
 
+    /// <summary>True when the options are different quantities of which the first at hand counts; giving several is then no contradiction.</summary>
+    public bool Alternatives { get; init; }
+
     /// <summary>Every kind that may fill the slot.</summary>
     public IEnumerable<Kind> Kinds => Options.SelectMany(option => option.Terms).SelectMany(term => term.AnyOf).Distinct();
 
-    internal Option? Chosen(Roots roots)
+    /// <summary>The derived kind that is the one way to fill the slot; null when there are other ways.</summary>
+    internal Kind? OnlyDerived
     {
-        foreach (var option in Options)
+        get
         {
-            if (option.Complete(roots))
+            for (var i = 0; Options.Count == 1 && i < Options[0].Terms.Count; i++)
             {
-                return option;
+                var kinds = Options[0].Terms[i].AnyOf;
+                for (var j = 0; j < kinds.Count; j++)
+                {
+                    if (kinds[j].Formula is not null)
+                    {
+                        return kinds[j];
+                    }
+                }
             }
-        }
 
-        return null;
+            return null;
+        }
+    }
+
+    /// <summary>Place in tables by slot; given to slots that are evaluated only, so that tables stay small.</summary>
+    /// <remarks>A copy made by <c>with</c> is another slot and takes a number of its own.</remarks>
+    internal int Number => ReferenceEquals(Volatile.Read(ref _numbered), this) ? _number : Numbered();
+
+    /// <summary>The option that fills the slot; null when none does.</summary>
+    internal Option? Chosen(Roots roots) => roots.Chosen(this);
+
+    /// <summary>A slot is equal to itself only: two definitions may ask for the same thing in two slots.</summary>
+    public bool Equals(Slot? other) => ReferenceEquals(this, other);
+
+    /// <inheritdoc/>
+    public override int GetHashCode() => System.Runtime.CompilerServices.RuntimeHelpers.GetHashCode(this);
+
+    private int Numbered()
+    {
+        lock (Numbering)
+        {
+            if (!ReferenceEquals(_numbered, this))
+            {
+                _number = ++_last;
+                Volatile.Write(ref _numbered, this);
+            }
+
+            return _number;
+        }
     }
 }

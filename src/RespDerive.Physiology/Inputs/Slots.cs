@@ -42,6 +42,22 @@ public static class Slots
     public static readonly Slot TidalVolumeAnchor = new("tidal volume",
         [new Option(Kinds.TidalVolumeExpired, new Pairing.AnchorItself()), new Option(Kinds.TidalVolume, new Pairing.AnchorItself())]);
 
+    /// <summary>Total breath rate near the anchor.</summary>
+    public static readonly Slot Rate = new(Kinds.RateTotal, new Pairing.Nearest(TimeSpan.FromMinutes(2), TimeSpan.FromMinutes(2)));
+
+    /// <summary>Peak pressure of the breath whose plateau is the anchor.</summary>
+    public static readonly Slot Peak = new(Kinds.Peak, new Pairing.SameManoeuvre(TimeSpan.FromMinutes(1)));
+
+    /// <summary>Constant of the published formulas of mechanical power.</summary>
+    public static readonly Slot PrintedWorkFactor = new(Kinds.PrintedWorkFactor, new Pairing.Site(TimeSpan.Zero));
+
+    /// <summary>
+    /// Evidence that the mode is the one a formula is made for; a gate judges which mode it is.
+    /// From the record nothing is taken for granted; by hand the mode is assumed unless it is given, and stands in the result as assumed.
+    /// </summary>
+    public static Slot ModeKnown(string missing) => new(Kinds.Mode.Name,
+        [new Option(Kinds.Mode, new Pairing.InForce()), new Option(Kinds.ModeTaken, new Pairing.ByHand(), Flags.ModeUnconfirmed)], missing);
+
     /// <summary>Station pressure: site policy, else a reading of the last 6 h; never assumed.</summary>
     public static readonly Slot BarometricPressure = new(Kinds.BarometricPressure, new Pairing.Site(TimeSpan.FromHours(6)), Withheld.PressureUnknown);
 

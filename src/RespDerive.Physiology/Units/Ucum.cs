@@ -90,11 +90,77 @@ public static class Ucum
         // volume per body mass, in mL/kg
         ["mL/kg"] = new("volume per mass", 1m),
         ["L/kg"] = new("volume per mass", 1000m),
+        // pressure over pressure, in mm[Hg]/cm[H2O]
+        ["mm[Hg]/cm[H2O]"] = new("pressure over airway pressure", 1m),
+        ["kPa/cm[H2O]"] = new("pressure over airway pressure", 1m / 0.133322m),
+        // diffusing capacity, in mL/min/mm[Hg]; a mole is 22.4 L of gas (STPD), the figure of the lung function standards
+        ["mL/min/mm[Hg]"] = new("diffusing capacity", 1m),
+        ["mL/min/kPa"] = new("diffusing capacity", 0.133322m),
+        ["mmol/min/kPa"] = new("diffusing capacity", 22.4m * 0.133322m),
+        ["mmol/(min.kPa)"] = new("diffusing capacity", 22.4m * 0.133322m),
+        // diffusing capacity per volume, in mL/min/mm[Hg]/L
+        ["mL/min/mm[Hg]/L"] = new("diffusing capacity per volume", 1m),
+        ["mL/min/kPa/L"] = new("diffusing capacity per volume", 0.133322m),
+        ["mmol/min/kPa/L"] = new("diffusing capacity per volume", 22.4m * 0.133322m),
+        ["mmol/(min.kPa.L)"] = new("diffusing capacity per volume", 22.4m * 0.133322m),
+        // uptake resistance of blood, in min.kPa, and of the capillary bed, in min.kPa/mL
+        ["min.mm[Hg]"] = new("uptake resistance of blood", 0.133322m),
+        ["min.kPa"] = new("uptake resistance of blood", 1m),
+        ["min.mm[Hg]/mL"] = new("uptake resistance", 0.133322m),
+        ["min.kPa/mL"] = new("uptake resistance", 1m),
+        // gas tension per production and ventilation, in kPa.L/mL
+        ["mm[Hg].L/mL"] = new("tension per production and ventilation", 0.133322m),
+        ["kPa.L/mL"] = new("tension per production and ventilation", 1m),
+        // pH
+        ["[pH]"] = new("pH", 1m),
+        // mass concentration, in g/L
+        ["g/L"] = new("mass concentration", 1m),
+        ["g/dL"] = new("mass concentration", 10m),
+        ["mg/mL"] = new("mass concentration", 1m),
+        // gas in blood, in mL/dL
+        ["mL/dL"] = new("gas content", 1m),
+        ["mL/L"] = new("gas content", 0.1m),
+        // gas bound by mass, in mL/g
+        ["mL/g"] = new("gas capacity", 1m),
+        // solubility of a gas, in mL/dL/mm[Hg]
+        ["mL/dL/mm[Hg]"] = new("solubility", 1m),
+        ["mL/L/mm[Hg]"] = new("solubility", 0.1m),
+        ["mL/dL/kPa"] = new("solubility", 0.133322m),
+        ["mL/L/kPa"] = new("solubility", 0.0133322m),
+        // volume per body mass and pressure, in mL/kPa/kg
+        ["mL/kPa/kg"] = new("compliance per mass", 1m),
+        ["mL/cm[H2O]/kg"] = new("compliance per mass", 1m / 0.0980665m),
+        ["mL/mbar/kg"] = new("compliance per mass", 10m),
+        // rate per volume, in /min/L
+        ["/min/L"] = new("rate per volume", 1m),
+        ["/(min.L)"] = new("rate per volume", 1m),
+        ["/min/mL"] = new("rate per volume", 1000m),
+        // work, in J
+        ["J"] = new("work", 1m),
+        ["mJ"] = new("work", 0.001m),
+        ["L.cm[H2O]"] = new("work", 0.0980665m),
+        // work per time, in J/min
+        ["J/min"] = new("power", 1m),
+        ["W"] = new("power", 60m),
+        ["mW"] = new("power", 0.06m),
+        // work per volume and pressure: a pure number for the formulas that print their own
+        ["J/(L.cm[H2O])"] = new("work factor", 1m),
+        // amount concentration, in mmol/L; an equivalent is a mole of charges, and what is measured here has one charge
+        ["mmol/L"] = new("amount concentration", 1m),
+        ["mol/L"] = new("amount concentration", 1000m),
+        ["umol/L"] = new("amount concentration", 0.001m),
+        ["meq/L"] = new("amount concentration", 1m),
+        // molar solubility of a gas, in mmol/L/kPa
+        ["mmol/L/mm[Hg]"] = new("molar solubility", 1m / 0.133322m),
+        ["mmol/L/kPa"] = new("molar solubility", 1m),
         // temperature, in K
         ["K"] = new("temperature", 1m),
         ["Cel"] = new("temperature", 1m, 273.15m),
         ["[degF]"] = new("temperature", 5m / 9m, 273.15m - (32m * 5m / 9m)),
     }.ToFrozenDictionary(StringComparer.Ordinal);
+
+    /// <summary>Every accepted unit code.</summary>
+    internal static IEnumerable<string> Accepted => Table.Keys.Order(StringComparer.Ordinal);
 
     /// <summary>All accepted unit codes of the same dimension as <paramref name="unit"/>.</summary>
     public static IEnumerable<string> Alike(string unit) =>

@@ -17,7 +17,8 @@ public sealed class Evaluator
     public Evaluator(Catalogue catalogue, PolicyBook policies, string site)
     {
         (Catalogue, Policies, _site) = (catalogue, policies, NameBasedUuid.Site(site));
-        _reaches = catalogue.All.ToDictionary(definition => definition.Key, definition => new Reach(definition, catalogue, policies.LongestSetting), StringComparer.Ordinal);
+        Called = [.. catalogue.All.Where(definition => !definition.ByHandOnly)];
+        _reaches = Called.ToDictionary(definition => definition.Key, definition => new Reach(definition, catalogue, policies.LongestSetting), StringComparer.Ordinal);
     }
 
     /// <summary>Definitions.</summary>
@@ -26,12 +27,15 @@ public sealed class Evaluator
     /// <summary>Policies.</summary>
     public PolicyBook Policies { get; }
 
+    /// <summary>Definitions that a record can call for.</summary>
+    internal IReadOnlyList<Definition> Called { get; }
+
     internal Reach ReachOf(Definition definition) => _reaches[definition.Key];
 
     /// <summary>Outcomes of a definition for all its calls in a range of event time.</summary>
     public IReadOnlyList<Outcome> Evaluate(Definition definition, Slice slice, DateTimeOffset from, DateTimeOffset to, bool explain = false) =>
         [.. Calls.In(definition, slice, from, to)
-            .Where(call => Policies.At(call.Anchor.At).Definitions is not { } run || run.Contains(definition.Key))
+            .Where(call => Policies.At(call.Anchor.At).Runs(definition))
             .Select(call => Evaluate(definition, call, slice, explain))];
 
     private Outcome Evaluate(Definition definition, Call call, Slice slice, bool explain)
@@ -68,12 +72,15 @@ public sealed class Evaluator
             return outcome with { Withheld = withheld, Missing = explain ? [.. gathering.Missing.Select(slot => slot.Name)] : [], Considered = explain ? Story.Of(gathering, slice, definition, anchor, withheld) : [] };
         }
 
+        // A band is a code: the number it was taken from has the unit and the uncertainty.
+        var number = computed.Placement is null;
         return outcome with
         {
-            Value = computed.Value,
-            Published = computed.Published,
+            Value = number ? computed.Value : null,
+            Published = number ? computed.Published : null,
             Unit = definition.Result.Unit,
-            Uncertainty = computed.Uncertainty,
+            Uncertainty = number ? computed.Uncertainty : null,
+            Code = computed.Placement?.Code,
             SiteTolerance = roots.All.Any(root => policy.Tolerances.ContainsKey(root.Kind.Key)),
             SharedOffsetShare = computed.Shares.Where(share => share.Transducer is not null).Sum(share => share.Fraction),
             Flags = [.. computed.Flags.Union(gathering.Flags, StringComparer.Ordinal).Order(StringComparer.Ordinal)],

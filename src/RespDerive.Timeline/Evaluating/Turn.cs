@@ -30,7 +30,7 @@ public static class Turn
         var changed = Changed(before, now);
         var outcomes = new List<OutcomeChange>();
         var dirty = new List<(Definition Definition, Range Range)>();
-        foreach (var definition in evaluator.Catalogue.All)
+        foreach (var definition in evaluator.Called)
         {
             dirty.AddRange(Merge(Dirtied(evaluator.ReachOf(definition), changed, personChanged)).Select(range => (definition, range)));
         }

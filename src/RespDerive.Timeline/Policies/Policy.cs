@@ -1,3 +1,4 @@
+using RespDerive.Physiology;
 using RespDerive.Physiology.Inputs;
 
 namespace RespDerive.Timeline;
@@ -27,8 +28,12 @@ public sealed record Policy
     /// <summary>Tolerances of the site in place of the generic ones, by kind key.</summary>
     public IReadOnlyDictionary<string, Tolerance> Tolerances { get; init; } = new Dictionary<string, Tolerance>();
 
-    /// <summary>Definitions that run, by key; null = all of the catalogue.</summary>
+    /// <summary>Definitions that run, by key; null = those of the catalogue that run by default.</summary>
     public IReadOnlyList<string>? Definitions { get; init; }
+
+    /// <summary>True when the definition runs: those that are for hands only never do, lesser variants and bands only where they are named.</summary>
+    public bool Runs(Definition definition) =>
+        !definition.ByHandOnly && (Definitions is { } run ? run.Contains(definition.Key, StringComparer.Ordinal) : definition.OnByDefault);
 
     /// <summary>Publish mechanics from set PEEP (flagged) when total PEEP is unknown.</summary>
     public bool AcceptSetPeep { get; init; } = true;

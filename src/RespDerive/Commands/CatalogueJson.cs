@@ -16,6 +16,8 @@ internal static class CatalogueJson
         ["symbol"] = definition.Result.Symbol,
         ["name"] = definition.Result.Name,
         ["purpose"] = definition.Purpose,
+        ["onByDefault"] = definition.OnByDefault,
+        ["byHandOnly"] = definition.ByHandOnly,
         ["unit"] = definition.Result.Unit,
         ["codes"] = Array(definition.Codes.Select(code => new JsonObject { ["system"] = code.System, ["code"] = code.Code, ["display"] = code.Display })),
         ["needs"] = Texts(definition.Result.Needs.Select(CatalogueText.Symbol)),
@@ -33,6 +35,14 @@ internal static class CatalogueJson
         full["usual"] = Range(definition.Usual.Least, definition.Usual.Greatest);
         full["possible"] = Range(definition.Result.Least, definition.Result.Greatest);
         full["greatestRelativeUncertainty"] = definition.GreatestRelativeUncertainty;
+        full["onByDefault"] = definition.OnByDefault;
+        full["byHandOnly"] = definition.ByHandOnly;
+        if (definition is Classification bands)
+        {
+            full["codes"] = Array(definition.Result.Codes.Select(code => new JsonObject { ["code"] = code, ["text"] = bands.Text(code) }));
+            full["criteria"] = Array(bands.Criteria.Select(Criterion));
+        }
+
         full["anchors"] = Texts(definition.Calling.Anchors.Select(kind => kind.Key));
         full["inputs"] = Array(CatalogueText.Chain(definition.Result.Needs.Concat(definition.ByIdentity)).Select(Slot));
         full["gates"] = Array(definition.Gates.Select(gate => new JsonObject { ["code"] = gate.Code, ["text"] = gate.Text, ["example"] = Inputs(gate.TrippedBy) }));
@@ -43,11 +53,20 @@ internal static class CatalogueJson
             ["evidence"] = vector.Evidence switch { Evidence.Published => "published", Evidence.Limit => "limit", _ => "regression" },
             ["source"] = vector.Source,
             ["inputs"] = Inputs(vector.Inputs),
-            ["expected"] = vector.Expected,
+            ["expected"] = definition.Result.IsCoded ? definition.Result.Codes[(int)vector.Expected] : vector.Expected,
             ["within"] = vector.Within,
         }));
         return full;
     }
+
+    private static JsonObject Criterion(Criterion criterion) => new()
+    {
+        ["name"] = criterion.Name,
+        ["number"] = criterion.Number.Key,
+        ["codes"] = Texts(criterion.Codes),
+        ["cuts"] = new JsonArray([.. criterion.Cuts.Select(cut => JsonValue.Create(cut))]),
+        ["cutIsBelow"] = criterion.CutIsBelow,
+    };
 
     private static JsonObject Slot(Slot slot) => new()
     {
@@ -77,7 +96,7 @@ internal static class CatalogueJson
         return inputs;
     }
 
-    private static JsonArray Range(double least, double greatest) => [least, greatest];
+    private static JsonArray? Range(double least, double greatest) => double.IsFinite(least) && double.IsFinite(greatest) ? [least, greatest] : null;
 
     private static JsonArray Texts(IEnumerable<string> texts) => [.. texts.Select(text => JsonValue.Create(text))];
 

@@ -17,7 +17,7 @@ internal static class CatalogueText
             definition.Key,
             definition.Result.Unit ?? "",
             definition.Codes.FirstOrDefault(code => code.System == "http://loinc.org") is { } loinc ? "LOINC " + loinc.Code : "",
-            "needs " + string.Join(", ", definition.Result.Needs.Select(Symbol)),
+            "needs " + string.Join(", ", definition.Result.Needs.Select(Symbol)) + Mark(definition),
         })).ToArray();
         var lines = Columns.Of([.. rows.Select(row => row.Row)]).Split('\n');
         var text = new StringBuilder();
@@ -37,12 +37,16 @@ internal static class CatalogueText
             .Append(definition.Key).Append(": ").Append(result.Name).Append("\n\n")
             .Append(Columns.Note("", definition.Summary, 0)).Append('\n')
             .Append(Columns.Note("Equation", definition.Equation))
-            .Append(Columns.Note("Unit", (result.Unit == "1" ? "none (1)" : result.Unit) + ", " + Plural(definition.Decimals, "decimal")))
+            .Append(definition is Classification bands ? Bands(bands) : Columns.Note("Unit", (result.Unit == "1" ? "none (1)" : result.Unit) + ", " + Plural(definition.Decimals, "decimal")))
             .Append(Columns.Note("Assumes", definition.Assumptions))
             .Append(Columns.Note("Caution", definition.Caution))
-            .Append(Columns.Note("Called for", CalledFor(definition.Calling)))
-            .Append(Columns.Note("Usual", Range(definition.Usual.Least, definition.Usual.Greatest, result.Unit) + "; outside, it is flagged"))
-            .Append(Columns.Note("Possible", Range(result.Least, result.Greatest, result.Unit) + "; outside, it is withheld"));
+            .Append(Columns.Note("Called for", CalledFor(definition)));
+        if (!result.IsCoded)
+        {
+            text.Append(Columns.Note("Usual", Range(definition.Usual.Least, definition.Usual.Greatest, result.Unit) + "; outside, it is flagged"))
+                .Append(Columns.Note("Possible", Range(result.Least, result.Greatest, result.Unit) + "; outside, it is withheld"));
+        }
+
         if (definition.GreatestRelativeUncertainty is { } greatest)
         {
             text.Append(Columns.Note("Certainty", $"withheld above a relative standard uncertainty of {Figures.Percent(greatest)}"));
@@ -58,7 +62,7 @@ internal static class CatalogueText
             text.Append(Columns.Note(code.System == "http://loinc.org" ? "LOINC" : "MDC", $"{code.Code} {code.Display}"));
         }
 
-        text.Append("\nInputs, best first where several will do\n").Append(Columns.Of([.. InputRows(definition)]));
+        text.Append("\nInputs, best first where several will do\n").Append(Inputs(definition));
         if (definition.Gates.Count > 0)
         {
             text.Append("\nWithheld when\n").Append(Columns.Of([.. definition.Gates.Select(gate => new[] { gate.Text, gate.Code })]));
@@ -71,7 +75,7 @@ internal static class CatalogueText
             text.Append("\nFlags\n").Append(string.Concat(flags.Select(flag => Columns.Note(flag, Flags.Text(flag), 24))));
         }
 
-        text.Append("\nWorked examples\n").Append(string.Concat(definition.Vectors.Select(vector => Columns.Note(Name(vector.Evidence), $"{vector.Source} ({Inputs(vector)} → {Figures.Plain(vector.Expected)}{Figures.Unit(result.Unit)})"))));
+        text.Append("\nWorked examples\n").Append(string.Concat(definition.Vectors.Select(vector => Columns.Note(Name(vector.Evidence), $"{vector.Source} ({Inputs(vector)} → {Expected(result, vector)})"))));
         return text.Append("\nSources\n").Append(string.Concat(definition.Citations.Select(citation => Columns.Note("", citation.Text + (citation.Doi is { } doi ? $" doi:{doi}" : ""), 0)))).ToString();
     }
 
@@ -80,6 +84,9 @@ internal static class CatalogueText
 
     /// <summary>The slots of a definition and of those it rests on.</summary>
     internal static IEnumerable<Slot> Chain(IEnumerable<Slot> slots) => slots.SelectMany(slot => slot.Kinds.SelectMany(kind => Chain(kind.Needs)).Prepend(slot)).Distinct();
+
+    /// <summary>The inputs with ranges and units, best first.</summary>
+    internal static string Inputs(Definition definition) => Columns.Of([.. InputRows(definition)]);
 
     private static IEnumerable<string[]> InputRows(Definition definition)
     {
@@ -91,15 +98,35 @@ internal static class CatalogueText
                 [
                     kind.Symbol, kind.Name, kind.Key,
                     kind.IsCoded ? string.Join(" | ", kind.Codes) : Range(kind.Least, kind.Greatest, kind.Unit),
-                    kind.Formula is not null ? "given, or computed" : kind.Assumed is { } assumed ? $"assumed {Figures.Plain(assumed)} unless given" : "",
+                    kind.Formula is not null ? "given, or computed" : kind.Assumed is { } assumed ? $"assumed {(kind.IsCoded ? kind.Codes[(int)assumed] : Figures.Plain(assumed))} unless given" : "",
                 ];
             }
         }
     }
 
-    private static string CalledFor(Calling calling)
+    /// <summary>What sets a definition apart from those that simply run.</summary>
+    private static string Mark(Definition definition) => definition.ByHandOnly ? " (by hand only)" : definition.OnByDefault ? "" : " (off by default)";
+
+    private static string Bands(Classification bands) =>
+        string.Concat(bands.Result.Codes.Select(code => Columns.Note("Code", $"{code}: {bands.Text(code)}")))
+        + string.Concat(bands.Criteria.Select(criterion => Columns.Note("Criterion",
+            $"{criterion.Name} by {criterion.Number.Result.Symbol}, rising: {Cuts(criterion)}; a cut-point itself belongs {(criterion.CutIsBelow ? "below" : "above")}")));
+
+    public static string Cuts(Criterion criterion) =>
+        string.Concat(criterion.Codes.Select((code, i) => i < criterion.Cuts.Count ? string.Create(CultureInfo.InvariantCulture, $"{code} | {criterion.Cuts[i]} | ") : code));
+
+    public static string Expected(Kind result, Vector vector) =>
+        result.IsCoded ? result.Codes[(int)vector.Expected] : Figures.Plain(vector.Expected) + Figures.Unit(result.Unit);
+
+    private static string CalledFor(Definition definition)
     {
-        var text = "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))
+        var calling = definition.Calling;
+        if (calling.Anchors.Count == 0)
+        {
+            return "by hand only; never published";
+        }
+
+        var text = (definition.OnByDefault ? "" : "only where the site names it; ") + "by " + string.Join(", else ", calling.Anchors.Select(kind => kind.Name))
             + (calling.Cadence == Cadence.QuarterHour ? "; the first in each quarter of an hour" : "; each, or the first in each quarter of an hour of a streamed signal");
         text += calling.OnlyWith.Count > 0 ? "; only when the patient's record of the last 24 h shows that it applies" : "";
         return text + (calling.NotWith.Count > 0 ? $"; not beside {string.Join(", ", calling.NotWith.Select(kind => kind.Name))}" : "");

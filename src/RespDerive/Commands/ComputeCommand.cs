@@ -14,12 +14,13 @@ internal static class ComputeCommand
           respderive compute static-compliance "VT=420 mL" Pplat=24 PEEPtot=10 --output json
           respderive compute predicted-body-weight sex=female "height=165 cm"
           respderive compute --lines < requests.ndjson
+          respderive compute elastance          (what it needs)
 
         A request line: {"id":"1","definition":"pf-ratio","inputs":{"PaO2":{"value":12,"unit":"kPa"},"FiO2":0.4}}
         Exit codes: 0 a value, 1 withheld, 2 wrong request, 5 a line that could not be used.
         """;
 
-    public static Command Create()
+    public static Command Create(Catalogue catalogue)
     {
         var definition = new Argument<string?>("DEFINITION") { Description = "Key of the definition.", Arity = ArgumentArity.ZeroOrOne };
         var values = new Argument<string[]>("name=value") { Description = "An input, such as \"pao2=90 mm[Hg]\", sex=male or fio2=missing.", Arity = ArgumentArity.ZeroOrMore };
@@ -35,17 +36,18 @@ internal static class ComputeCommand
         });
         Examples.Add(command, Help);
         command.SetAction((parsed, cancel) => parsed.GetValue(lines)
-            ? ComputeLines.RunAsync(Console.In, parsed.InvocationConfiguration.Output, cancel)
-            : Task.FromResult(One(parsed.GetValue(definition)!, parsed.GetValue(values)!, parsed.GetValue(output) == "json", parsed.InvocationConfiguration)));
+            ? ComputeLines.RunAsync(catalogue, Console.In, parsed.InvocationConfiguration.Output, cancel)
+            : Task.FromResult(One(catalogue, parsed.GetValue(definition)!, parsed.GetValue(values)!, parsed.GetValue(output) == "json", parsed.InvocationConfiguration)));
         return command;
     }
 
-    private static int One(string key, string[] words, bool json, InvocationConfiguration streams)
+    private static int One(Catalogue catalogue, string key, string[] words, bool json, InvocationConfiguration streams)
     {
         try
         {
-            var hand = ByHand.Compute(ComputeRequest.Definition(key), words.Select(ComputeRequest.Word));
-            streams.Output.Write(json ? OutputOption.Pretty(ComputeJson.Of(hand, null)) + "\n" : ComputeText.Of(hand));
+            var definition = ComputeRequest.Definition(catalogue, key);
+            var hand = ByHand.Compute(definition, words.Select(ComputeRequest.Word), catalogue);
+            streams.Output.Write(json ? OutputOption.Pretty(ComputeJson.Of(hand, null)) + "\n" : words.Length == 0 ? ComputeText.Needs(definition) : ComputeText.Of(hand));
             return hand.Computation.Withheld is null ? Exit.Ok : Exit.Findings;
         }
         catch (UnusableRequestException wrong)

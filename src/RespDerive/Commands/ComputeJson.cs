@@ -10,20 +10,27 @@ internal static class ComputeJson
     {
         var computed = hand.Computation;
         var published = computed.Withheld is null;
-        return new JsonObject
+        var numeric = published && computed.Placement is null;
+        var answer = new JsonObject
         {
             ["id"] = id,
             ["definition"] = hand.Definition.Key,
             ["revision"] = hand.Definition.Revision,
-            ["value"] = published ? computed.Value : null,
-            ["published"] = published ? Publication.Text(computed.Published, hand.Definition.Decimals) : null,
+            ["value"] = numeric ? computed.Value : Coded(hand),
+            ["published"] = numeric ? Publication.Text(computed.Published, hand.Definition.Decimals) : null,
             ["unit"] = hand.Definition.Result.Unit,
-            ["uncertainty"] = published ? computed.Uncertainty : null,
+            ["uncertainty"] = numeric ? computed.Uncertainty : null,
             ["inputs"] = Inputs(hand),
             ["unused"] = new JsonArray([.. hand.Unused.Select(name => JsonValue.Create(name))]),
             ["flags"] = new JsonArray([.. computed.Flags.Select(flag => JsonValue.Create(flag))]),
             ["withheld"] = published ? null : new JsonObject { ["code"] = computed.Withheld, ["text"] = Reason(computed) },
         };
+        if (computed.Placement is { } placement)
+        {
+            answer["bands"] = new JsonArray([.. placement.Bands.Select(band => new JsonObject { ["code"] = band.Code, ["probability"] = band.Probability })]);
+        }
+
+        return answer;
     }
 
     /// <summary>A request that could not be computed.</summary>
@@ -33,6 +40,10 @@ internal static class ComputeJson
     public static string Reason(Computation computed) => computed.Missing.Count > 0
         ? $"{Withheld.Text(computed.Withheld!).TrimEnd('.')}: {string.Join(", ", computed.Missing)}."
         : Withheld.Text(computed.Withheld!);
+
+    private static JsonObject? Coded(ByHand hand) => hand.Computation.Placement is { } placement
+        ? new JsonObject { ["code"] = placement.Code, ["text"] = ((Classification)hand.Definition).Text(placement.Code) }
+        : null;
 
     private static JsonObject Inputs(ByHand hand)
     {

@@ -9,7 +9,10 @@ internal static class ComputeLines
 {
     /// <summary>Answers every line until the end; a line that cannot be used is answered with <c>error</c> and the rest go on.</summary>
     /// <returns><see cref="Exit.Data"/> when any line could not be used.</returns>
-    public static async Task<int> RunAsync(TextReader input, TextWriter output, CancellationToken cancel)
+    public static Task<int> RunAsync(TextReader input, TextWriter output, CancellationToken cancel) => RunAsync(Catalogue.Shipped, input, output, cancel);
+
+    /// <summary>The same with the definitions of another catalogue.</summary>
+    public static async Task<int> RunAsync(Catalogue catalogue, TextReader input, TextWriter output, CancellationToken cancel)
     {
         var code = Exit.Ok;
         while (await input.ReadLineAsync(cancel) is { } line)
@@ -19,7 +22,7 @@ internal static class ComputeLines
                 continue;
             }
 
-            var answer = Answer(line);
+            var answer = Answer(catalogue, line);
             code = answer.ContainsKey("error") ? Exit.Data : code;
             await output.WriteLineAsync(OutputOption.Line(answer).AsMemory(), cancel);
             await output.FlushAsync(cancel);
@@ -28,7 +31,7 @@ internal static class ComputeLines
         return code;
     }
 
-    private static JsonObject Answer(string line)
+    private static JsonObject Answer(Catalogue catalogue, string line)
     {
         JsonNode? id = null;
         string? definition = null;
@@ -50,7 +53,7 @@ internal static class ComputeLines
                 throw new UnusableRequestException("The request has no object 'inputs'.");
             }
 
-            return ComputeJson.Of(ByHand.Compute(ComputeRequest.Definition(definition!), inputs.EnumerateObject().Select(ComputeRequest.Member)), id);
+            return ComputeJson.Of(ByHand.Compute(ComputeRequest.Definition(catalogue, definition!), inputs.EnumerateObject().Select(ComputeRequest.Member), catalogue), id);
         }
         catch (Exception wrong) when (wrong is UnusableRequestException or JsonException)
         {

@@ -12,8 +12,8 @@ internal static partial class ComputeRequest
 
     /// <summary>A definition by key or alias.</summary>
     /// <exception cref="UnusableRequestException">No such definition; the message lists near ones.</exception>
-    public static Definition Definition(string key) => Catalogue.Shipped.Find(key) ?? throw new UnusableRequestException(
-        NearNames.To(key, Catalogue.Shipped.All.SelectMany(definition => definition.Aliases.Prepend(definition.Key))) is { Count: > 0 } near
+    public static Definition Definition(Catalogue catalogue, string key) => catalogue.Find(key) ?? throw new UnusableRequestException(
+        NearNames.To(key, catalogue.All.SelectMany(definition => definition.Aliases.Prepend(definition.Key))) is { Count: > 0 } near
             ? $"There is no definition '{key}'. Near: {string.Join(", ", near)}."
             : $"There is no definition '{key}'. The command 'catalogue' lists them.");
 

@@ -27,7 +27,7 @@ internal static class DeriveCommand
 
     private sealed record Request(string[] Files, string? Out, string? Withheld, bool History, double? Pressure, double? Altitude, ServiceOptions Options, bool Json);
 
-    public static Command Create()
+    public static Command Create(Catalogue catalogue)
     {
         var files = new Argument<string[]>("FILES") { Description = "NDJSON or Bundle files, read in this order.", Arity = ArgumentArity.OneOrMore };
         var target = new Option<string?>("--out") { Description = "Where results go; standard output otherwise.", HelpName = "FILE" };
@@ -68,7 +68,7 @@ internal static class DeriveCommand
             };
             var request = new Request(parsed.GetValue(files)!, parsed.GetValue(target), parsed.GetValue(withheld), parsed.GetValue(history),
                 parsed.GetValue(pressure), parsed.GetValue(altitude), options, parsed.GetValue(output) == "json");
-            return RunAsync(request, parsed.InvocationConfiguration, cancel);
+            return RunAsync(catalogue, request, parsed.InvocationConfiguration, cancel);
         });
         return command;
     }
@@ -84,7 +84,7 @@ internal static class DeriveCommand
         return null;
     }
 
-    private static async Task<int> RunAsync(Request request, InvocationConfiguration streams, CancellationToken cancel)
+    private static async Task<int> RunAsync(Catalogue catalogue, Request request, InvocationConfiguration streams, CancellationToken cancel)
     {
         var errors = Problems(request).ToArray();
         if (errors.Length > 0)
@@ -100,7 +100,7 @@ internal static class DeriveCommand
         Site site;
         try
         {
-            site = new Site(request.Options, Catalogue.Shipped, Policies(request));
+            site = new Site(request.Options, catalogue, Policies(request));
         }
         catch (SiteException exception)
         {

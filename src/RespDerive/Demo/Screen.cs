@@ -115,6 +115,11 @@ internal sealed class Screen(TextWriter writer)
 
     private static string Value(Outcome outcome)
     {
+        if (outcome.Code is { } code)
+        {
+            return code;
+        }
+
         var decimals = Catalogue.Shipped.Find(outcome.Definition)?.Decimals ?? 0;
         var unit = outcome.Unit == "1" ? "" : " " + outcome.Unit;
         return $"{Publication.Text(outcome.Published!.Value, decimals)}{unit} ± {outcome.Uncertainty!.Value.ToString("G2", CultureInfo.InvariantCulture)}";

@@ -36,6 +36,15 @@ public sealed class ArtefactTests
     }
 
     [Fact]
+    public void The_document_of_a_band_lists_its_criteria_with_their_cut_points()
+    {
+        var text = Encoding.UTF8.GetString(DefinitionDocument.Of(Catalogue.Shipped.Find("ards-oxygenation-band")!));
+        Assert.Contains("\"cuts\":[100,200,300]", text, StringComparison.Ordinal);
+        Assert.Contains("\"name\":\"berlin-2012\"", text, StringComparison.Ordinal);
+        Assert.Contains("\"code\":\"moderate\"", text, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void Every_definition_has_a_document_of_its_own() =>
         Assert.Equal(Catalogue.Shipped.All.Count, Catalogue.Shipped.All.Select(DefinitionDocument.Hash).Distinct().Count());
 

@@ -168,6 +168,18 @@ public sealed class ObservationTests
     }
 
     [Fact]
+    public void A_band_is_posted_as_a_code_in_words_with_its_criterion_as_the_method()
+    {
+        var band = (Classification)Catalogue.Shipped.Find("ards-oxygenation-band")!;
+        var observation = Rendered(Samples.Synthetic(band));
+        var value = Assert.IsType<CodeableConcept>(observation.Value);
+        Assert.Equal("ards-oxygenation-band.mild", Assert.Single(value.Coding).Code);
+        Assert.Equal((band.Text("mild"), band.Text("mild")), (value.Text, value.Coding[0].Display));
+        Assert.Equal("ards-oxygenation-band.berlin-2012", observation.Method.Coding[0].Code);
+        Assert.DoesNotContain("uncertainty", observation.Method.Text, StringComparison.OrdinalIgnoreCase);
+    }
+
+    [Fact]
     public void A_retraction_drops_the_number_and_keeps_the_evidence()
     {
         var before = Rendered(Samples.DrivingPressure);

@@ -71,13 +71,13 @@ public sealed class PolicyFileTests
     public void All_faults_are_told_at_once_with_their_place()
     {
         var errors = Errors("""
-            {"presure": 760, "respiratoryQuotient": 8, "acceptSetPeep": "no", "definitions": ["pf-ratio", "no-such"],
+            {"presure": 760, "respiratoryQuotient": 8, "acceptSetPeep": "no", "definitions": ["pf-ratio", "no-such", "minimum-work-rate"],
              "tolerances": {"po3": {"as": "limit", "source": "x"}, "pao2": {"as": "sigma", "relativ": 1}}, "sources": {"ehr": {"settings": "sometimes"}},
              "policies": [{"pressure": {"value": 1013, "unit": "psi"}}, {"validFrom": "2026-05-01"}, {"validFrom": "2026-05-01T00:00:00Z", "pressure": 760, "altitude": 3}]}
             """);
         string[] places =
         [
-            "presure: unknown", "respiratoryQuotient: must be 0.6 to 1.2", "acceptSetPeep: must", "definitions[1]: no such", "tolerances.po3: not", "tolerances.pao2.relativ: unknown",
+            "presure: unknown", "respiratoryQuotient: must be 0.6 to 1.2", "acceptSetPeep: must", "definitions[1]: no such", "definitions[2]: minimum-work-rate is computed by hand only", "tolerances.po3: not", "tolerances.pao2.relativ: unknown",
             "tolerances.pao2.as: must", "tolerances.pao2.source: missing", "sources.ehr.settings: must", "policies[0].pressure: unit must", "policies[0].validFrom: missing",
             "policies[1].validFrom: must", "policies[2].pressure: give",
         ];

@@ -115,10 +115,11 @@ internal static class Samples
             Definition = definition.Key,
             Revision = definition.Revision,
             Anchor = Reading("anchor", inputs[0].Value),
-            Value = computation.Value,
-            Published = computation.Published,
+            Value = computation.Placement is null ? computation.Value : null,
+            Published = computation.Placement is null ? computation.Published : null,
             Unit = definition.Result.Unit,
-            Uncertainty = computation.Uncertainty,
+            Uncertainty = computation.Placement is null ? computation.Uncertainty : null,
+            Code = computation.Placement?.Code,
             Flags = computation.Flags,
             Variant = computation.Variant,
             Inputs = inputs,
@@ -127,16 +128,18 @@ internal static class Samples
 
     private static (List<UsedInput> Inputs, Computation Computation) Computed(Definition definition, Vector vector)
     {
-        var inputs = vector.Inputs.Select(given => Input(Find(given.Name), given)).ToList();
-        return (inputs, Computation.Of(definition, new Roots(inputs.Select(input => new Root(Find(input.Kind), input.Value)))));
+        var computed = ByHand.Compute(definition, vector.Inputs);
+        return ([.. computed.Inputs.Select(Input)], computed.Computation);
     }
 
-    private static UsedInput Input(Kind kind, Given given) => kind.IsCoded
-        ? new UsedInput { Kind = kind.Key, Value = kind.Codes.ToList().IndexOf(given.Code!), Code = given.Code }
-        : new UsedInput { Kind = kind.Key, Value = Canonical(kind, given), Unit = kind.Unit, Readings = kind.Assumed is null ? [Reading(kind.Key, Canonical(kind, given))] : [], Assumed = kind.Assumed is not null };
-
-    private static double Canonical(Kind kind, Given given) =>
-        Physiology.Units.Ucum.TryConvert(given.Value!.Value, given.Unit ?? kind.Unit!, kind.Unit!, out var value) ? (double)value : throw new InvalidOperationException(given.Name);
-
-    private static Kind Find(string name) => Kinds.All.Concat(Catalogue.Shipped.All.Select(definition => definition.Result)).First(kind => kind.Symbol == name || kind.Key == name);
+    private static UsedInput Input(HandInput input) => new()
+    {
+        Kind = input.Kind.Key,
+        Value = input.Value,
+        Unit = input.Kind.Unit,
+        Code = input.Code,
+        Readings = input.Assumed ? [] : [Reading(input.Kind.Key, input.Value)],
+        Assumed = input.Assumed,
+        GateOnly = input.CheckedOnly,
+    };
 }
