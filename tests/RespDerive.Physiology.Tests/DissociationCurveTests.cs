@@ -2,7 +2,7 @@ namespace RespDerive.Physiology.Tests;
 
 /// <summary>
 /// The curves against table 1 of Severinghaus JW, J Appl Physiol 1979;46:599 (observed standard curve, pH 7.40, 37 °C; three independent public
-/// transcriptions agree). The paper states a greatest error of its equation 1 of 0.55 % saturation; the misfits of the other curves are those
+/// copies agree). The paper states a greatest error of its equation 1 of 0.55 % saturation; the misfits of the other curves are those
 /// their definitions state and put into the uncertainty.
 /// </summary>
 public sealed class DissociationCurveTests
