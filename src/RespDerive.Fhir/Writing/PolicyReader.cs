@@ -1,5 +1,6 @@
 using System.Globalization;
 using System.Text.Json;
+using RespDerive.Fhir.Server;
 using RespDerive.Physiology;
 using RespDerive.Physiology.Inputs;
 using RespDerive.Physiology.Units;
@@ -177,8 +178,8 @@ internal sealed class PolicyReader(Catalogue catalogue, List<string> errors)
             return null;
         }
 
-        var form = Text(json, "as");
-        var source = Text(json, "source");
+        var form = json.Text("as");
+        var source = json.Text("source");
         if (form is not ("limit" or "deviation"))
         {
             errors.Add($"{place}.as: must be \"limit\" (±a) or \"deviation\" (standard deviation)");
@@ -237,7 +238,4 @@ internal sealed class PolicyReader(Catalogue catalogue, List<string> errors)
 
         return true;
     }
-
-    private static string? Text(JsonElement json, string name) =>
-        json.TryGetProperty(name, out var value) && value.ValueKind == JsonValueKind.String ? value.GetString() : null;
 }

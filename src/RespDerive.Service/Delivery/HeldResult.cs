@@ -18,8 +18,8 @@ internal sealed record HeldResult(string? Version, string? Status, string Digest
         {
             using var json = JsonDocument.Parse(answer.Body);
             var root = json.RootElement;
-            return Text(root, "resourceType") == "Observation"
-                ? new HeldResult((root.TryGetProperty("meta", out var meta) ? Text(meta, "versionId") : null) ?? answer.ETag, Text(root, "status"), ContentDigest.Of(answer.Body))
+            return root.Text("resourceType") == "Observation"
+                ? new HeldResult(root.Member("meta").Text("versionId") ?? answer.ETag, root.Text("status"), ContentDigest.Of(answer.Body))
                 : null;
         }
         catch (Exception exception) when (exception is JsonException or InvalidOperationException)
@@ -27,7 +27,4 @@ internal sealed record HeldResult(string? Version, string? Status, string Digest
             return null;
         }
     }
-
-    private static string? Text(JsonElement json, string name) =>
-        json.TryGetProperty(name, out var text) && text.ValueKind == JsonValueKind.String ? text.GetString() : null;
 }

@@ -1,5 +1,6 @@
 using System.Text.Json;
 using RespDerive.Fhir;
+using RespDerive.Fhir.Server;
 
 namespace RespDerive.Service.Intake;
 
@@ -16,7 +17,7 @@ internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyLis
         try
         {
             using var json = JsonDocument.Parse(body, new JsonDocumentOptions { MaxDepth = Deepest });
-            return json.RootElement is { ValueKind: JsonValueKind.Object } root && Text(root, "resourceType") is { } type
+            return json.RootElement is { ValueKind: JsonValueKind.Object } root && root.Text("resourceType") is { } type
                 ? type == "Bundle" ? OfBundle(root) : new Notification([new Brought(body, null)], [])
                 : null;
         }
@@ -31,20 +32,20 @@ internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyLis
         var brought = new List<Brought>();
         var named = new List<string>();
         var links = Bundles.Links(bundle);
-        foreach (var entry in Items(bundle, "entry"))
+        foreach (var entry in bundle.Items("entry"))
         {
             if (!entry.TryGetProperty("resource", out var resource) || resource.ValueKind != JsonValueKind.Object)
             {
                 continue;
             }
 
-            if (Text(resource, "resourceType") is "Parameters" or "SubscriptionStatus")
+            if (resource.Text("resourceType") is "Parameters" or "SubscriptionStatus")
             {
                 named.AddRange(Focus(resource));
             }
             else
             {
-                brought.Add(new Brought(JsonSerializer.SerializeToUtf8Bytes(resource), Text(entry, "fullUrl")) { Links = Used(links, resource.GetRawText()) });
+                brought.Add(new Brought(JsonSerializer.SerializeToUtf8Bytes(resource), entry.Text("fullUrl")) { Links = Used(links, resource.GetRawText()) });
             }
         }
 
@@ -58,10 +59,10 @@ internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyLis
     /// <summary>References called focus, wherever the status resource keeps them; the last two path segments make them relative.</summary>
     private static IEnumerable<string> Focus(JsonElement status)
     {
-        var events = Items(status, "parameter").Where(parameter => Text(parameter, "name") == "notification-event").SelectMany(parameter => Items(parameter, "part"))
-            .Where(part => Text(part, "name") == "focus").Select(part => part.TryGetProperty("valueReference", out var value) ? value : default)
-            .Concat(Items(status, "notificationEvent").Select(one => one.TryGetProperty("focus", out var focus) ? focus : default));
-        foreach (var reference in events.Select(focus => Text(focus, "reference")).OfType<string>())
+        var events = status.Items("parameter").Where(parameter => parameter.Text("name") == "notification-event").SelectMany(parameter => parameter.Items("part"))
+            .Where(part => part.Text("name") == "focus").Select(part => part.Member("valueReference"))
+            .Concat(status.Items("notificationEvent").Select(one => one.Member("focus")));
+        foreach (var reference in events.Select(focus => focus.Text("reference")).OfType<string>())
         {
             var parts = reference.Split("/_history/")[0].Split('/', StringSplitOptions.RemoveEmptyEntries);
             if (parts.Length >= 2)
@@ -70,10 +71,4 @@ internal sealed record Notification(IReadOnlyList<Brought> Brought, IReadOnlyLis
             }
         }
     }
-
-    private static IEnumerable<JsonElement> Items(JsonElement json, string name) =>
-        json.ValueKind == JsonValueKind.Object && json.TryGetProperty(name, out var items) && items.ValueKind == JsonValueKind.Array ? items.EnumerateArray() : [];
-
-    private static string? Text(JsonElement json, string name) =>
-        json.ValueKind == JsonValueKind.Object && json.TryGetProperty(name, out var text) && text.ValueKind == JsonValueKind.String ? text.GetString() : null;
 }

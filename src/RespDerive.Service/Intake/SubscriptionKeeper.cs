@@ -65,7 +65,7 @@ internal sealed class SubscriptionKeeper(Store store, SourceServer source, IOpti
         }
 
         using var json = JsonDocument.Parse(answer.Body);
-        return (id, Text(json.RootElement, "status"));
+        return (id, json.RootElement.Text("status"));
     }
 
     private async Task LookAsync(ServerAnswer answer, string criterion, string name)
@@ -89,10 +89,10 @@ internal sealed class SubscriptionKeeper(Store store, SourceServer source, IOpti
             {
                 using var json = JsonDocument.Parse(entry.Resource);
                 var root = json.RootElement;
-                if (root.TryGetProperty("channel", out var channel) && Text(channel, "endpoint") == endpoint.AbsoluteUri
-                    && Text(root, "criteria") is { } criterion && Text(root, "id") is { } id)
+                if (root.Member("channel").Text("endpoint") == endpoint.AbsoluteUri
+                    && root.Text("criteria") is { } criterion && root.Text("id") is { } id)
                 {
-                    known[criterion] = (id, Text(root, "status"));
+                    known[criterion] = (id, root.Text("status"));
                 }
             }
         }
@@ -113,7 +113,4 @@ internal sealed class SubscriptionKeeper(Store store, SourceServer source, IOpti
             Header = intake.NotificationAuthorization is { } secret ? [$"Authorization: {secret}"] : [],
         },
     };
-
-    private static string? Text(JsonElement json, string name) =>
-        json.TryGetProperty(name, out var text) && text.ValueKind == JsonValueKind.String ? text.GetString() : null;
 }

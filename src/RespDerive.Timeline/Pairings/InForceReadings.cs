@@ -7,18 +7,16 @@ internal static class InForceReadings
 {
     /// <summary>The last reading of the kinds that is in force; a refused one is given too, since it blocks.</summary>
     public static Reading? At(IReadOnlyList<Kind> kinds, DateTimeOffset at, Slice slice, Policy policy) =>
-        slice.Last(kinds, at, Longest(policy)) is { } last && at - last.At <= MaxAge(last, policy) && !Ended(last, at, slice) ? last : null;
+        slice.Last(kinds, at, policy.LongestSetting) is { } last && at - last.At <= MaxAge(last, policy) && !Ended(last, at, slice) ? last : null;
 
     /// <summary>The last reading before the hour in which changes count, if it was still in force at the anchor.</summary>
     public static Reading? LastBefore(Kind kind, DateTimeOffset at, Slice slice, Policy policy)
     {
         var before = at.Minus(Reach.SettlingWindow).Minus(TimeSpan.FromTicks(1));
-        return slice.Last([kind], before, Longest(policy)) is { } last && at - last.At <= MaxAge(last, policy) ? last : null;
+        return slice.Last([kind], before, policy.LongestSetting) is { } last && at - last.At <= MaxAge(last, policy) ? last : null;
     }
 
     private static TimeSpan MaxAge(Reading setting, Policy policy) => policy.TimingOf(setting.Id.Resource.Source).SettingMaxAge;
-
-    private static TimeSpan Longest(Policy policy) => policy.Sources.Values.Append(new SourceTiming()).Max(timing => timing.SettingMaxAge);
 
     /// <summary>The end of support ends every setting; the end of an encounter those made in it.</summary>
     private static bool Ended(Reading setting, DateTimeOffset at, Slice slice)

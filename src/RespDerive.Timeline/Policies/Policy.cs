@@ -39,7 +39,14 @@ public sealed record Policy
     public bool AcceptSetPeep { get; init; } = true;
 
     /// <summary>Timing by source name; a source not named has the defaults.</summary>
-    public IReadOnlyDictionary<string, SourceTiming> Sources { get; init; } = new Dictionary<string, SourceTiming>();
+    public IReadOnlyDictionary<string, SourceTiming> Sources
+    {
+        get;
+        init => (field, LongestSetting) = (value, value.Values.Append(Default).Max(timing => timing.SettingMaxAge));
+    } = new Dictionary<string, SourceTiming>();
+
+    /// <summary>Longest time a setting of any source stays in force.</summary>
+    public TimeSpan LongestSetting { get; private init; } = Default.SettingMaxAge;
 
     /// <summary>Hash of the canonical policy document, lower-case hex; names it in every Provenance.</summary>
     public string Hash { get; init; } = "";
@@ -69,7 +76,7 @@ public sealed class PolicyBook
     public IReadOnlyList<Policy> All => _policies;
 
     /// <summary>Longest time a setting stays in force under any of the policies.</summary>
-    public TimeSpan LongestSetting => _policies.SelectMany(policy => policy.Sources.Values).Append(new SourceTiming()).Max(timing => timing.SettingMaxAge);
+    public TimeSpan LongestSetting => _policies.Max(policy => policy.LongestSetting);
 
     /// <summary>The policy in force at an event time; before the first one, the first.</summary>
     public Policy At(DateTimeOffset time) => _policies.LastOrDefault(policy => (policy.ValidFrom ?? DateTimeOffset.MinValue) <= time) ?? _policies[0];
